@@ -1,0 +1,83 @@
+"""tensionlib: design of steel tension members and their end connections.
+
+Importing it is light; names are loaded on first use::
+
+    import tensionlib as tl
+    from tensionlib.units import kN, mm, m
+"""
+
+from __future__ import annotations
+
+from importlib import import_module
+from typing import TYPE_CHECKING, Any
+
+from tensionlib.version import __version__
+
+if TYPE_CHECKING:
+    from tensionlib.calculation.formula import Constant as Constant
+    from tensionlib.calculation.formula import condition as condition
+    from tensionlib.calculation.formula import formula as formula
+    from tensionlib.calculation.result import Calculation as Calculation
+    from tensionlib.calculation.result import Check as Check
+    from tensionlib.calculation.symbols import Notation as Notation
+    from tensionlib.calculation.symbols import Source as Source
+    from tensionlib.calculation.symbols import Symbol as Symbol
+    from tensionlib.calculation.symbols import project_notation as project_notation
+    from tensionlib.calculation.working import Working as Working
+    from tensionlib.joints.ends import Bolted as Bolted
+    from tensionlib.joints.ends import Gusset as Gusset
+    from tensionlib.joints.ends import Welded as Welded
+    from tensionlib.members.design import design as design
+    from tensionlib.members.member import Member as Member
+    from tensionlib.package.issue import issue as issue
+    from tensionlib.package.project import check_file as check_file
+    from tensionlib.quantities import METRIC as METRIC
+    from tensionlib.quantities import US as US
+    from tensionlib.quantities import steps as steps
+    from tensionlib.quantities import values as values
+    from tensionlib.steel import bolt as bolt
+    from tensionlib.steel import find as find
+    from tensionlib.steel import grade as grade
+    from tensionlib.steel import section as section
+
+_WHERE = {
+    "Bolted": "joints.ends",
+    "Calculation": "calculation.result",
+    "Check": "calculation.result",
+    "Constant": "calculation.formula",
+    "Gusset": "joints.ends",
+    "METRIC": "quantities",
+    "Member": "members.member",
+    "Notation": "calculation.symbols",
+    "Source": "calculation.symbols",
+    "Symbol": "calculation.symbols",
+    "US": "quantities",
+    "Welded": "joints.ends",
+    "Working": "calculation.working",
+    "bolt": "steel",
+    "check_file": "package.project",
+    "condition": "calculation.formula",
+    "design": "members.design",
+    "find": "steel",
+    "formula": "calculation.formula",
+    "grade": "steel",
+    "issue": "package.issue",
+    "project_notation": "calculation.symbols",
+    "section": "steel",
+    "steps": "quantities",
+    "values": "quantities",
+}
+
+__all__ = ["__version__", *sorted(_WHERE)]
+
+
+def __getattr__(name: str) -> Any:
+    if name not in _WHERE:
+        raise AttributeError(f"module 'tensionlib' has no attribute {name!r}")
+    found = getattr(import_module(f"tensionlib.{_WHERE[name]}"), name)
+    globals()[name] = found
+    return found
+
+
+def __dir__() -> list[str]:
+    return sorted(__all__)

@@ -1,0 +1,1 @@
+"""Formulas, sheets, and calculations with their readings."""

@@ -1,0 +1,1 @@
+"""End connections: what they are, their sketches."""

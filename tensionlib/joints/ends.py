@@ -1,0 +1,266 @@
+"""End connections as the user states them: bolted or welded to a gusset.
+
+Every dimension is a quantity. A dimension left out takes the standard's or the common value and
+is printed as an assumption by the calculation.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, fields
+from typing import Any, Literal
+
+from tensionlib.errors import InputError, did_you_mean
+from tensionlib.quantities import LENGTH, Quantity, count, door, factor
+
+Length = Quantity | str
+
+THREADS = ("in shear plane", "out of shear plane")
+EDGES = ("sheared", "machine cut", "rolled")
+BOLTED_TO = ("long leg", "short leg", "leg", "web", "flange", "both flanges", "plate")
+WELDED_TO = (*BOLTED_TO, "slot", "bar")
+QUALITIES = ("SP", "GP")
+
+
+def _choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
+    if not isinstance(value, str) or value not in accepted:
+        raise InputError(
+            f"{argument}: got {value!r}; one of {', '.join(map(repr, accepted))} is due."
+            + (did_you_mean(value, accepted) if isinstance(value, str) else "")
+        )
+    return value
+
+
+class _Stated:
+    """Passes the fields of a frozen dataclass through the door."""
+
+    def _length(self, name: str, *, at_least: float | None = None, example: str = "") -> None:
+        value = getattr(self, name)
+        if value is None:
+            return
+        above = 0.0 if at_least is None else None
+        quantity = door(name, value, LENGTH, above=above, at_least=at_least, example=example or None)
+        object.__setattr__(self, name, quantity)
+
+    def but(self, **changes: Any) -> Any:
+        """A copy with some fields changed.
+
+        Raises
+        ------
+        InputError
+            For a name that is not a field.
+        """
+        names = [f.name for f in fields(self)]  # type: ignore[arg-type]
+        for name in changes:
+            if name not in names:
+                raise InputError(
+                    f"{type(self).__name__}: {name!r} is not a field; fields are"
+                    f" {', '.join(names)}." + did_you_mean(name, names)
+                )
+        return type(self)(**{name: getattr(self, name) for name in names} | changes)
+
+
+@dataclass(frozen=True)
+class Gusset(_Stated):
+    """A gusset plate.
+
+    Parameters
+    ----------
+    thickness : length
+    steel : str
+        Plate grade, for example "AS/NZS 3678 250".
+    width : length, optional
+        Width of plate there is across the force at the last bolts or the end of the weld. It
+        clips the width to which the force spreads; without it the plate is taken as wide enough
+        and the calculation says so.
+    """
+
+    thickness: Length
+    steel: str
+    width: Length | None = None
+
+    def __post_init__(self) -> None:
+        self._length("thickness", example="12 mm")
+        self._length("width", example="260 mm")
+        if not isinstance(self.steel, str):
+            raise InputError(
+                f"steel: got {self.steel!r}; name a grade, for example 'AS/NZS 3678 250'"
+            )
+
+
+@dataclass(frozen=True)
+class Bolted(_Stated):
+    """A bolted end: one or two lines of bolts through one element of the section.
+
+    Parameters
+    ----------
+    to : str
+        The element the bolts go through: "long leg", "short leg" or "leg" of an angle, "web" of a
+        channel, I or tee, "flange" of a tee, "both flanges" of an I or channel, "plate" of a flat.
+    bolts : str
+        Size, grade and category, for example "M20 8.8/S".
+    threads : str
+        "in shear plane" or "out of shear plane".
+    per_line : int
+        Bolts in each line along the force.
+    plate : Gusset
+    lines : int
+        1 or 2. For both flanges: lines in each flange.
+    pitch : length
+        Bolt to bolt along a line; due for more than one bolt a line.
+    gauge : length
+        Heel of an angle to its first line; due for an angle. On other elements the lines stand
+        symmetrical about the middle of the element.
+    line_spacing : length
+        Line to line across the force; due for two lines.
+    stagger : length
+        How far the second line stands back from the first along the force; 0 for straight lines.
+    end_distance : length
+        Centre of the end bolt to the end of the member.
+    plate_end_distance : length, optional
+        Centre of the last bolt to the edge of the gusset that lies across the member; taken as
+        `end_distance` unless given.
+    plate_edge_distance : length, optional
+        Centre of the outer bolt to the side edge of the gusset, across the force.
+    clearance : length, optional
+        Hole diameter less bolt diameter; the standard's unless given.
+    edge_kind : str
+        How the member's end and the gusset's edges are cut: "sheared" (or hand flame cut),
+        "machine cut" (machine flame cut, sawn or planed) or "rolled".
+    """
+
+    to: str
+    bolts: str
+    threads: str
+    per_line: int
+    plate: Gusset
+    end_distance: Length
+    lines: int = 1
+    pitch: Length | None = None
+    gauge: Length | None = None
+    line_spacing: Length | None = None
+    stagger: Length | None = None
+    plate_end_distance: Length | None = None
+    plate_edge_distance: Length | None = None
+    clearance: Length | None = None
+    edge_kind: str = "sheared"
+    kind: Literal["bolted"] = "bolted"
+
+    def __post_init__(self) -> None:
+        _choice("to", self.to, BOLTED_TO)
+        _choice("threads", self.threads, THREADS)
+        _choice("edge_kind", self.edge_kind, EDGES)
+        if not isinstance(self.bolts, str):
+            raise InputError(f"bolts: got {self.bolts!r}; name them, for example 'M20 8.8/S'")
+        if not isinstance(self.plate, Gusset):
+            raise InputError(
+                f"plate: got {self.plate!r}; a Gusset is due, for example"
+                " Gusset('12 mm', 'AS/NZS 3678 250')"
+            )
+        object.__setattr__(self, "per_line", count("per_line", self.per_line, at_least=1))
+        object.__setattr__(self, "lines", count("lines", self.lines, at_least=1))
+        if self.lines > 2:
+            raise InputError(f"lines: got {self.lines}; 1 or 2 lines of bolts are accepted")
+        for name, example in (
+            ("pitch", "70 mm"),
+            ("gauge", "55 mm"),
+            ("line_spacing", "60 mm"),
+            ("end_distance", "35 mm"),
+            ("plate_end_distance", "35 mm"),
+            ("plate_edge_distance", "50 mm"),
+        ):
+            self._length(name, example=example)
+        self._length("stagger", at_least=0.0, example="35 mm")
+        self._length("clearance", at_least=0.0, example="2 mm")
+        if self.per_line > 1 and self.pitch is None:
+            raise InputError("pitch: missing; two or more bolts a line need it, for example '70 mm'")
+        if self.lines == 2 and self.line_spacing is None:
+            raise InputError("line_spacing: missing; two lines of bolts need it, for example '60 mm'")
+        if self.lines == 1 and self.stagger is not None and self.stagger.internal > 0.0:  # type: ignore[union-attr]
+            raise InputError("stagger: given for one line of bolts; it needs lines=2")
+        if self.lines == 1 and self.line_spacing is not None:
+            raise InputError("line_spacing: given for one line of bolts; it needs lines=2")
+        if self.to in ("long leg", "short leg", "leg") and self.gauge is None:
+            raise InputError(
+                "gauge: missing; an angle's bolts need the distance from its heel, for example"
+                " '55 mm'"
+            )
+
+
+@dataclass(frozen=True)
+class Welded(_Stated):
+    """A welded end: longitudinal fillets along both sides, and one across the end if wanted.
+
+    Parameters
+    ----------
+    to : str
+        The element on the gusset: as `Bolted`, or "slot" of a tube slotted over the gusset (four
+        runs), or "bar" of a round bar laid in a slot of the gusset (four runs).
+    leg_size : length
+        Fillet leg size.
+    plate : Gusset
+    length_1 : length
+        Length of the run along the heel of an angle, or along the first side.
+    length_2 : length
+        Length of the run along the other side; the same as `length_1` unless given.
+    transverse : length, optional
+        Length of the run across the member's end.
+    quality : str
+        "SP" or "GP".
+    metal : str
+        Weld metal, for example "E48XX".
+    slot_clearance : length, optional
+        Width of the slots in a tube over the gusset's thickness; due for "slot".
+    k_te : number, optional
+        Correction factor stated by the engineer where the standard's table has no row for the
+        case (a slotted tube); printed with `k_te_reason`.
+    """
+
+    to: str
+    leg_size: Length
+    plate: Gusset
+    length_1: Length
+    length_2: Length | None = None
+    transverse: Length | None = None
+    quality: str = "SP"
+    metal: str = "E48XX"
+    slot_clearance: Length | None = None
+    k_te: float | None = None
+    k_te_reason: str = ""
+    kind: Literal["welded"] = "welded"
+
+    def __post_init__(self) -> None:
+        _choice("to", self.to, WELDED_TO)
+        _choice("quality", self.quality, QUALITIES)
+        if not isinstance(self.metal, str):
+            raise InputError(f"metal: got {self.metal!r}; name it, for example 'E48XX'")
+        if not isinstance(self.plate, Gusset):
+            raise InputError(
+                f"plate: got {self.plate!r}; a Gusset is due, for example"
+                " Gusset('12 mm', 'AS/NZS 3678 250')"
+            )
+        self._length("leg_size", example="6 mm")
+        self._length("length_1", example="120 mm")
+        if self.length_2 is None:
+            object.__setattr__(self, "length_2", self.length_1)
+        self._length("length_2", example="120 mm")
+        self._length("transverse", example="90 mm")
+        self._length("slot_clearance", at_least=0.0, example="3 mm")
+        if (self.to == "slot") != (self.slot_clearance is not None):
+            raise InputError(
+                "slot_clearance: missing; a slotted tube needs it, for example '3 mm'"
+                if self.to == "slot"
+                else f"slot_clearance: given for an end welded to {self.to!r}; it needs to='slot'"
+            )
+        if self.transverse is not None and self.to in ("slot", "bar", "both flanges"):
+            raise InputError(
+                f"transverse: given for an end welded to {self.to!r}; a run across the end is"
+                " accepted on a leg, web, flange or plate"
+            )
+        if self.k_te is not None:
+            stated = factor("k_te", self.k_te, above=0.0, at_most=1.0)
+            object.__setattr__(self, "k_te", stated)
+            if not isinstance(self.k_te_reason, str) or not self.k_te_reason.strip():
+                raise InputError("k_te_reason: missing; a stated k_te needs the reason that is printed")
+
+
+End = Bolted | Welded

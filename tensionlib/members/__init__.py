@@ -1,0 +1,1 @@
+"""A member with its ends, and the way from it to a calculation."""

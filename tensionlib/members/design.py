@@ -1,0 +1,158 @@
+"""design(): from a member, its ends and a force to one calculation."""
+
+from __future__ import annotations
+
+from tensionlib.calculation.result import Calculation, Heading
+from tensionlib.calculation.sheet import Entry
+from tensionlib.calculation.symbols import Notation, Source
+from tensionlib.calculation.working import Working
+from tensionlib.errors import InputError
+from tensionlib.joints.ends import Bolted
+from tensionlib.members.geometry import check_fit, seat
+from tensionlib.members.member import Member
+from tensionlib.members.resolve import end_inputs, member_inputs
+from tensionlib.members.sketching import sketches
+from tensionlib.quantities import (
+    FORCE,
+    LENGTH,
+    METRIC,
+    SUMMARY_FIGURES,
+    Quantity,
+    View,
+    door,
+    format_value,
+)
+from tensionlib.standards import Standard
+from tensionlib.standards import standard as find_standard
+from tensionlib.steel import bolt, grade, weld_metal
+
+FORCE_PART = "Design force"
+
+
+def design(
+    member: Member,
+    force: Quantity | str | Entry,
+    *,
+    standard: str = "NZS 3404",
+    view: View = METRIC,
+    origin: str = "given",
+) -> Calculation:
+    """Design a tension member and its end connections to a standard.
+
+    Parameters
+    ----------
+    member : Member
+    force : quantity, text with a unit, or an entry
+        The design tension force N* for the strength limit state. An entry of a working of your
+        own brings that working's lines with it as the first parts of the calculation.
+    standard : str
+        "NZS 3404".
+    view : View
+        The units it is shown in: METRIC or US.
+    origin : str
+        Who says the force: "schedule row 3".
+
+    Returns
+    -------
+    Calculation
+        Every check with its clause, the governing one, what was assumed and what was not checked.
+
+    Raises
+    ------
+    UnitError, InputError, DataNotFoundError
+        Naming the argument, what came and what is accepted. Compression is refused.
+    """
+    if not isinstance(member, Member):
+        raise InputError(f"member: got {member!r}; a Member(...) is due")
+    chosen = find_standard(standard)
+    work, N_star = _force(force, chosen.notation, origin)
+    _check_fit(member, chosen)
+    two = len(member.ends) == 2
+    ends = tuple(
+        end_inputs(
+            member,
+            end,
+            label=f"End {i}: " if two else "",
+            prefix=f"end {i} " if two else "",
+        )
+        for i, end in enumerate(member.ends, start=1)
+    )
+    chosen.design(work, member_inputs(member), ends, N_star)
+    if not two:
+        work.assume("both ends are connected in the same way")
+    heading = Heading(
+        mark=member.mark,
+        title=member.title,
+        subject=f"{member.profile.designation}, {member.material.name}",
+        standard=chosen.source,
+        standard_key=chosen.key,
+        force=N_star.index,
+    )
+    demand = work.values[N_star.index]
+    return Calculation.of(
+        work,
+        heading,
+        sources=((chosen.source, "member and connection design"), *_materials(member)),
+        draw=lambda: sketches(
+            member, f"{N_star.symbol.text} = {format_value(demand, FORCE, view, SUMMARY_FIGURES)}"
+        ),
+        view=view,
+    )
+
+
+def _force(
+    force: Quantity | str | Entry, notation: Notation, origin: str
+) -> tuple[Working, Entry]:
+    if isinstance(force, Entry):
+        if not isinstance(force.owner, Working):
+            raise InputError("force: this entry belongs to no working")
+        if force.symbol.role != FORCE:
+            raise InputError(
+                f"force: got {force.symbol.text}, {force.symbol.role.phrase}; a force is due"
+            )
+        work = force.owner.fork(notation)
+        N_star = work.adopt(force)
+        _refuse_compression(work.values[N_star.index])
+        return work, N_star
+    number = door("force", force, FORCE, example="285 kN").internal
+    _refuse_compression(number)
+    work = Working(FORCE_PART, notation)
+    return work, work.given_number("N_star", number, origin, "N_star")
+
+
+def _refuse_compression(force: float) -> None:
+    if force < 0.0:
+        raise InputError(
+            f"force: got {format_value(force, FORCE)}, compression; this library designs tension,"
+            " so give the tension force as a positive value, for example '285 kN' (compression"
+            " only enters as the reversal case of a gusset)"
+        )
+
+
+def _check_fit(member: Member, chosen: Standard) -> None:
+    for end in member.ends:
+        if isinstance(end, Bolted):
+            place = seat(member.profile, end)
+            d_f = bolt(end.bolts).d_f
+            clearance = (
+                chosen.hole_clearance(d_f)
+                if end.clearance is None
+                else door("clearance", end.clearance, LENGTH).internal
+            )
+            check_fit(member.profile, end, place, d_f + clearance)
+
+
+def _materials(member: Member) -> list[tuple[Source, str]]:
+    """Sources of the materials: section, gussets, bolts, weld metal."""
+    steel = member.material
+    found = [(Source(steel.standard, steel.standard, steel.known), f"section: {steel.name}")]
+    for end in member.ends:
+        plate = grade(end.plate.steel)
+        found.append((Source(plate.standard, plate.standard, plate.known), f"gusset: {plate.name}"))
+        if isinstance(end, Bolted):
+            fastener = bolt(end.bolts)
+            found.append((Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}"))
+        else:
+            metal = weld_metal(end.metal)
+            found.append((Source(metal.source, metal.source, "from memory"), f"welds: {metal.name}"))
+    return list(dict.fromkeys(found))

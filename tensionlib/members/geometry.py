@@ -1,0 +1,161 @@
+"""Where an end's bolts or welds lie on the section, and whether they can lie there at all."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from tensionlib.errors import InputError
+from tensionlib.joints.ends import Bolted, End
+from tensionlib.quantities import LENGTH, format_value
+from tensionlib.steel import Section
+
+_LEGS = ("long leg", "short leg", "leg")
+
+# Elements of each shape that an end may take hold of, by kind of end.
+_BOLTED: dict[str, tuple[str, ...]] = {
+    "angle": _LEGS,
+    "double angle": _LEGS,
+    "channel": ("web", "both flanges"),
+    "double channel": ("web",),
+    "I": ("web", "both flanges"),
+    "tee": ("flange", "web"),
+    "flat": ("plate",),
+    "stated": ("plate",),
+}
+_WELDED: dict[str, tuple[str, ...]] = {
+    **_BOLTED,
+    "round": ("bar",),
+    "CHS": ("slot",),
+    "RHS": ("slot",),
+}
+
+
+@dataclass(frozen=True)
+class Seat:
+    """The element an end takes hold of.
+
+    Lengths in mm: `thickness` and `width` of the element; `plies` elements of the member and
+    `gussets` share the force; `planes` is shear planes a bolt. `lines_from` tells whether bolt
+    lines are set out from the heel or about the middle; `free_edge` whether the element ends in a
+    rolled edge beside the bolts (a web does not).
+    """
+
+    element: str
+    thickness: float
+    width: float
+    plies: int
+    gussets: int
+    planes: int
+    lines_from: str
+    free_edge: bool
+
+
+def seat(section: Section, end: End) -> Seat:
+    """The seat of an end on a section.
+
+    Raises
+    ------
+    InputError
+        When the section has no such element, naming those it has.
+    """
+    kind = "bolted" if isinstance(end, Bolted) else "welded"
+    accepted = (_BOLTED if kind == "bolted" else _WELDED).get(section.shape, ())
+    if not accepted:
+        raise InputError(
+            f"to: {section.designation} ({section.shape}) cannot be {kind} in this library;"
+            " weld tubes and round bars by 'slot' and 'bar'"
+        )
+    equal = section.shape in ("angle", "double angle") and section.leg("long leg") == section.leg(
+        "short leg"
+    )
+    if end.to not in accepted or (end.to == "leg" and not equal):
+        named = [n for n in accepted if n != "leg" or equal]
+        raise InputError(
+            f"to: got {end.to!r}; {section.designation} ({section.shape}) can be {kind} by its"
+            f" {', '.join(map(repr, named))}"
+        )
+    element = {"both flanges": "flange", "slot": "wall", "bar": "plate"}.get(end.to, end.to)
+    double = section.shape.startswith("double")
+    both = end.to == "both flanges"
+    return Seat(
+        element=element,
+        thickness=section.thickness(element),
+        width=section.leg(element),
+        plies=2 if double or both else 1,
+        gussets=2 if both else 1,
+        planes=2 if double else 1,
+        lines_from="heel"
+        if end.to in _LEGS or (both and section.shape == "channel")
+        else "middle",
+        free_edge=end.to != "web",
+    )
+
+
+def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
+    """Refuse holes that overlap or leave the part. `hole` is the hole's diameter, mm.
+
+    Distances below a standard's minimum but on the part are the standard's to judge.
+
+    Raises
+    ------
+    InputError
+        Naming the field, what came and what would fit.
+    """
+
+    def length(name: str) -> float | None:
+        value = getattr(end, name)
+        return None if value is None else value.internal
+
+    def refuse(name: str, why: str, least: float | None = None) -> None:
+        value = length(name)
+        shown = "missing" if value is None else format_value(value, LENGTH)
+        more = "" if least is None else f"; more than {format_value(least, LENGTH)} is due"
+        raise InputError(f"{name}: {shown}; {why}{more}")
+
+    radius = hole / 2
+    for name in ("end_distance", "plate_end_distance", "plate_edge_distance"):
+        value = length(name)
+        if value is not None and value <= radius:
+            refuse(name, "the hole would cut the edge", radius)
+    pitch, spacing, stagger = length("pitch"), length("line_spacing"), length("stagger") or 0.0
+    if end.per_line > 1 and pitch is not None and pitch <= hole:
+        refuse("pitch", "the holes would overlap", hole)
+    if end.lines == 2 and spacing is not None:
+        step = min(stagger, (pitch or stagger) - stagger) if stagger else 0.0
+        if step < 0.0:
+            refuse("stagger", "it is at most the pitch")
+        if (step * step + spacing * spacing) ** 0.5 <= hole:
+            refuse("line_spacing", "the holes of the two lines would overlap", hole)
+    outer = (spacing or 0.0) if end.lines == 2 else 0.0
+    if place.lines_from == "heel":
+        gauge = length("gauge")
+        if gauge is None:
+            refuse("gauge", "missing: bolts through a channel's flanges are set out from its back")
+            return
+        if gauge - radius <= section.thickness(_other(section, place)):
+            refuse(
+                "gauge",
+                "the hole would run into the other leg or the web",
+                section.thickness(_other(section, place)) + radius,
+            )
+        if gauge + outer + radius >= place.width:
+            refuse("gauge", f"the hole leaves the {place.element}, {place.width:g} mm wide")
+        return
+    if end.gauge is not None:
+        refuse("gauge", f"bolts through the {end.to} stand about its middle; leave gauge out")
+    if outer / 2 + radius >= place.width / 2:
+        name = "line_spacing" if end.lines == 2 else "bolts"
+        raise InputError(f"{name}: the hole leaves the {place.element}, {place.width:g} mm wide")
+    if place.element == "flange" and section.shape in ("I", "tee"):
+        web = section.thickness("web")
+        if outer / 2 - radius <= web / 2:
+            raise InputError(
+                "lines: bolts through a flange stand either side of the web; give lines=2 and a"
+                f" line_spacing of more than {web + hole:g} mm"
+            )
+
+
+def _other(section: Section, place: Seat) -> str:
+    if section.shape == "channel":
+        return "web"
+    return {"long leg": "short leg", "short leg": "long leg"}.get(place.element, place.element)

@@ -1,0 +1,99 @@
+"""A tension member as the user states it."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, fields
+from typing import Any
+
+from tensionlib.errors import InputError, did_you_mean
+from tensionlib.joints.ends import Bolted, End, Welded
+from tensionlib.quantities import LENGTH, Quantity, door
+from tensionlib.steel import Grade, Section, grade, section
+
+
+@dataclass(frozen=True)
+class Member:
+    """A tension member with its two ends.
+
+    Parameters
+    ----------
+    mark : str
+        The member's mark on the drawings: "RB1".
+    section : str or Section
+        Designation ("125x75x10 UA") or a section of your own.
+    steel : str or Grade
+        Grade of the section: "AS/NZS 3679.1 300".
+    length : length
+    end : Bolted or Welded
+        The end connection, at both ends unless `far_end` differs.
+    far_end : Bolted or Welded, optional
+    title : str
+        What the member is: "roof brace, grid B".
+
+    Raises
+    ------
+    UnitError, InputError, DataNotFoundError
+        Naming the field, what came, and what is accepted.
+    """
+
+    mark: str
+    section: str | Section
+    steel: str | Grade
+    length: Quantity | str
+    end: End
+    far_end: End | None = None
+    title: str = ""
+
+    def __post_init__(self) -> None:
+        for name in ("mark", "title"):
+            if not isinstance(getattr(self, name), str):
+                raise InputError(f"{name}: got {getattr(self, name)!r}; text is due, as 'RB1'")
+        if not self.mark.strip():
+            raise InputError("mark: empty; give the member's mark, for example 'RB1'")
+        object.__setattr__(self, "length", door("length", self.length, LENGTH, above=0.0, example="4600 mm"))
+        if isinstance(self.section, str):
+            object.__setattr__(self, "section", section(self.section))
+        elif not isinstance(self.section, Section):
+            raise InputError(
+                f"section: got {self.section!r}; a designation is due, for example '125x75x10 UA'"
+            )
+        if isinstance(self.steel, str):
+            object.__setattr__(self, "steel", grade(self.steel))
+        elif not isinstance(self.steel, Grade):
+            raise InputError(
+                f"steel: got {self.steel!r}; a grade is due, for example 'AS/NZS 3679.1 300'"
+            )
+        for name in ("end", "far_end"):
+            end = getattr(self, name)
+            if not isinstance(end, Bolted | Welded) and not (end is None and name == "far_end"):
+                raise InputError(f"{name}: got {end!r}; a Bolted(...) or Welded(...) end is due")
+
+    @property
+    def ends(self) -> tuple[End, ...]:
+        """The distinct ends: one when both are the same."""
+        if self.far_end is None or self.far_end == self.end:
+            return (self.end,)
+        return (self.end, self.far_end)
+
+    @property
+    def profile(self) -> Section:
+        """The section, looked up."""
+        assert isinstance(self.section, Section)
+        return self.section
+
+    @property
+    def material(self) -> Grade:
+        """The section's grade, looked up."""
+        assert isinstance(self.steel, Grade)
+        return self.steel
+
+    def but(self, **changes: Any) -> Member:
+        """A copy with some fields changed. Raises InputError for a name that is not a field."""
+        names = [f.name for f in fields(self)]
+        for name in changes:
+            if name not in names:
+                raise InputError(
+                    f"Member: {name!r} is not a field; fields are {', '.join(names)}."
+                    + did_you_mean(name, names)
+                )
+        return Member(**{name: getattr(self, name) for name in names} | changes)

@@ -1,0 +1,163 @@
+"""From a member as stated to the numbers, choices and tables a standard's walk is given."""
+
+from __future__ import annotations
+
+from functools import cache
+from typing import Any
+
+from tensionlib.calculation.inputs import Inputs, Number
+from tensionlib.calculation.tables import Band, ThresholdTable
+from tensionlib.errors import InputError
+from tensionlib.joints.ends import Bolted, End, Gusset, Welded
+from tensionlib.members.geometry import Seat, seat
+from tensionlib.members.member import Member
+from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
+
+_STATED = "given"
+_COUNTED = "from the connection"
+
+
+def member_inputs(member: Member) -> Inputs:
+    """Numbers, choices and tables of the member itself."""
+    section, steel = member.profile, member.material
+    steel.suits(section.shape)
+    source = f"{section.designation}: {section.source}"
+    numbers = {
+        "A_g": Number(section.A, source),
+        "L": Number(_length(member.length), _STATED),
+        "t_y": Number(_thickest(section), source),
+    }
+    if section.r_min is not None:
+        numbers["r_min"] = Number(section.r_min, source)
+    if "d" in section.dims:
+        numbers["d"] = Number(section.dims["d"], source)
+    return Inputs({"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u"))
+
+
+def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
+    """Numbers, choices and tables of one end.
+
+    Parameters
+    ----------
+    label : str
+        What the titles of the end's parts begin with: "" or "End 1: ".
+    prefix : str
+        What the keys of the end's inputs begin with.
+    """
+    section = member.profile
+    place = seat(section, end)
+    common = {
+        "n_e": Number(float(place.plies), _COUNTED),
+        "n_g": Number(float(place.gussets), _COUNTED),
+        "t": Number(place.thickness, f"{section.designation}: {section.source}"),
+        "b": Number(place.width, f"{section.designation}: {section.source}"),
+        **_plate(end.plate),
+    }
+    choices = {"label": label, "kind": end.kind, "to": end.to, "shape": section.shape}
+    plate_steel = grade(end.plate.steel)
+    plate_steel.suits("plate")
+    tables = _tables(plate_steel, "f_yp", "f_up")
+    if isinstance(end, Bolted):
+        more, also = _bolted(end, place)
+    else:
+        more, also = _welded(end)
+    return Inputs(choices | also, common | more, tables, prefix)
+
+
+def _length(value: Any) -> float:
+    length: float = value.internal
+    return length
+
+
+def _thickest(section: Section) -> float:
+    """Thickness that sets the yield stress: the thickest element, the conservative reading."""
+    sizes = [section.dims[n] for n in ("t", "t_f", "t_w") if n in section.dims]
+    if not sizes and "d" in section.dims:
+        sizes = [section.dims["d"]]
+    if not sizes:
+        raise InputError(
+            f"section: {section.designation} states no thickness; give t so that the grade's yield"
+            " stress can be read"
+        )
+    return max(sizes)
+
+
+def _plate(plate: Gusset) -> dict[str, Number]:
+    numbers = {"t_p": Number(_length(plate.thickness), _STATED)}
+    if plate.width is not None:
+        numbers["b_p"] = Number(_length(plate.width), _STATED)
+    return numbers
+
+
+@cache
+def _table(steel: Grade, strength: str) -> ThresholdTable:
+    bands = tuple(
+        Band(row.limit, row.closed, row.f_y if strength == "f_y" else row.f_u)
+        for row in steel.rows
+    )
+    return ThresholdTable(f"{strength} by thickness", f"{steel.standard}, {steel.known}", {steel.name: bands})
+
+
+def _tables(steel: Grade, f_y: str, f_u: str) -> dict[str, tuple[ThresholdTable, str]]:
+    return {
+        f_y: (_table(steel, "f_y"), steel.name),
+        f_u: (_table(steel, "f_u"), steel.name),
+    }
+
+
+def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]]:
+    fastener = bolt(end.bolts)
+    source = f"{fastener.size} {fastener.grade}: {fastener.source}"
+    planes = Number(float(place.planes), _COUNTED)
+    numbers = {
+        "d_f": Number(fastener.d_f, source),
+        "f_uf": Number(fastener.f_uf, source),
+        "A_c": Number(fastener.A_c, source),
+        "A_o": Number(fastener.A_o, source),
+        "n_n": planes,
+        "n_x": planes,
+        "n_l": Number(float(end.lines), _STATED),
+        "n_p": Number(float(end.per_line), _STATED),
+        "e_1": Number(_length(end.end_distance), _STATED),
+        "e_p": Number(_length(end.end_distance), "taken as the member's end distance")
+        if end.plate_end_distance is None
+        else Number(_length(end.plate_end_distance), _STATED),
+    }
+    stated = {
+        "s_p": end.pitch if end.per_line > 1 else None,
+        "s_g": end.line_spacing,
+        "g": end.gauge,
+        "e_s": end.plate_edge_distance,
+        "c_h": end.clearance,
+    }
+    numbers |= {n: Number(_length(v), _STATED) for n, v in stated.items() if v is not None}
+    staggered = end.stagger is not None and _length(end.stagger) > 0.0
+    if staggered:
+        numbers["s_2"] = Number(_length(end.stagger), _STATED)
+    choices = {
+        "pattern": "staggered" if staggered else "straight",
+        "threads": end.threads,
+        "category": fastener.category,
+        "edge_kind": end.edge_kind,
+        "side_edge": "rolled" if place.free_edge else "none",
+        "lines_from": place.lines_from,
+    }
+    return numbers, choices
+
+
+def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
+    metal = weld_metal(end.metal)
+    numbers = {
+        "t_w": Number(_length(end.leg_size), _STATED),
+        "l_1": Number(_length(end.length_1), _STATED),
+        "l_2": Number(_length(end.length_2), _STATED),
+        "f_uw": Number(metal.f_uw, f"{metal.name}: {metal.source}"),
+    }
+    if end.transverse is not None:
+        numbers["l_t"] = Number(_length(end.transverse), _STATED)
+    if end.k_te is not None:
+        numbers["k_te"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
+    if end.to == "slot":
+        numbers["n_s"] = Number(2.0, _COUNTED)
+        numbers["c_s"] = Number(_length(end.slot_clearance), _STATED)
+    return numbers, {"quality": end.quality}

@@ -1,0 +1,188 @@
+"""What a design file and its schedule say, once it has been checked: plain frozen data."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from pathlib import Path
+from typing import TYPE_CHECKING, Any, Literal
+
+from tensionlib.package.files.problems import Problem
+from tensionlib.quantities import FORCE, Quantity, parse
+
+if TYPE_CHECKING:
+    from tensionlib.joints.ends import Bolted, Welded
+
+Stated = str | int | float | Quantity
+
+
+@dataclass(frozen=True)
+class Revision:
+    """One row of the revision table."""
+
+    revision: str
+    date: str
+    description: str
+    made_by: str = ""
+    checked_by: str = ""
+
+
+@dataclass(frozen=True)
+class Project:
+    """The job as the cover and the document control table print it; every text is literal."""
+
+    job_number: str
+    title: str
+    client: str = ""
+    site: str = ""
+    made_by: str = ""
+    checked_by: str = ""
+    approved_by: str = ""
+    status: str = "draft"
+    revision: str = ""
+    date: str = ""
+    paper: str = "A4"
+    notes: tuple[str, ...] = ()
+    revisions: tuple[Revision, ...] = ()
+
+
+@dataclass(frozen=True)
+class StandardChoice:
+    """The standard by name, and its options as stated; the standard itself judges them."""
+
+    name: str
+    options: Mapping[str, Stated | bool]
+
+
+@dataclass(frozen=True)
+class EndDetail:
+    """An end connection as stated, its fields checked one by one.
+
+    Parameters
+    ----------
+    name : str
+        The name it has under `[ends]`; empty for one written inside a member.
+    kind : {"bolted", "welded"}
+    stated : tuple of (name, value)
+        The fields that were stated, lengths as Quantity. What was left out is not here: the
+        connection takes its own default for it.
+    plate : tuple of (name, value)
+        The fields of the gusset that were stated.
+    """
+
+    name: str
+    kind: Literal["bolted", "welded"]
+    stated: tuple[tuple[str, Stated], ...]
+    plate: tuple[tuple[str, Stated], ...]
+
+    def arguments(self) -> dict[str, Any]:
+        """Keyword arguments for `Bolted` or `Welded`; `plate` is a dict of them for `Gusset`."""
+        return {**dict(self.stated), "plate": dict(self.plate)}
+
+    def table(self) -> dict[str, Any]:
+        """The same detail as a table of a design file: lengths as text with their unit."""
+        return {
+            "kind": self.kind,
+            **{name: written(value) for name, value in self.stated},
+            "plate": {name: written(value) for name, value in self.plate},
+        }
+
+    def end(self) -> Bolted | Welded:
+        """The connection itself.
+
+        Raises
+        ------
+        InputError, UnitError
+            When fields that are each well stated do not go together.
+        """
+        from tensionlib.joints.ends import Bolted, Gusset, Welded
+
+        arguments = self.arguments()
+        arguments["plate"] = Gusset(**arguments["plate"])
+        return Bolted(**arguments) if self.kind == "bolted" else Welded(**arguments)
+
+
+@dataclass(frozen=True)
+class MemberRow:
+    """One member to be designed.
+
+    Parameters
+    ----------
+    mark, title, section, steel : str
+    length : Quantity
+        Above zero.
+    force : Quantity
+        Design tension force, zero or more.
+    end_1, end_2 : EndDetail
+    origin : str
+        Where it was stated: "members.csv row 3" or "canopy.toml line 40".
+    standard : str
+        Name of the standard for this member alone; empty for the project's.
+    """
+
+    mark: str
+    title: str
+    section: str
+    steel: str
+    length: Quantity
+    force: Quantity
+    end_1: EndDetail
+    end_2: EndDetail
+    origin: str
+    standard: str = ""
+
+
+@dataclass(frozen=True)
+class ScheduleSettings:
+    """How the design file says its schedule is to be read."""
+
+    file: str
+    sheet: str
+    columns: Mapping[str, str]
+    ignore: tuple[str, ...]
+    defaults: Mapping[str, str]
+
+
+@dataclass(frozen=True)
+class ScheduleRows:
+    """The good rows of a schedule, and what is wrong with the others."""
+
+    rows: tuple[MemberRow, ...]
+    problems: tuple[Problem, ...] = ()
+
+
+@dataclass(frozen=True)
+class DesignFile:
+    """A design file that has been read and checked.
+
+    Parameters
+    ----------
+    path : Path
+    project : Project
+    standard : StandardChoice
+    ends : mapping of str to EndDetail
+    members : tuple of MemberRow
+        Those of the design file first, then the rows of the schedule.
+    schedule : ScheduleSettings or None
+    problems : tuple of Problem
+        The schedule's problems when it was read with ``strict=False``; else empty.
+    """
+
+    path: Path
+    project: Project
+    standard: StandardChoice
+    ends: Mapping[str, EndDetail]
+    members: tuple[MemberRow, ...]
+    schedule: ScheduleSettings | None
+    problems: tuple[Problem, ...] = ()
+
+
+def written(value: Stated) -> str | int | float:
+    """A stated value as a design file writes it, so that reading it gives the same number."""
+    if not isinstance(value, Quantity):
+        return value
+    # Twelve significant figures are what a quantity carries; a division may cost the last of them.
+    text = f"{value.internal / value.unit.size:.12g} {value.unit.name}"
+    if parse(text).internal == value.internal:
+        return text
+    return f"{value.internal:.12g} {'N' if value.role is FORCE else 'mm'}"

@@ -1,0 +1,31 @@
+"""What a standard offers to the layers above."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from dataclasses import dataclass
+
+from tensionlib.calculation.inputs import Inputs
+from tensionlib.calculation.sheet import Entry
+from tensionlib.calculation.symbols import Notation, Source
+from tensionlib.calculation.working import Working
+
+Walk = Callable[[Working, Inputs, tuple[Inputs, ...], Entry], None]
+
+
+@dataclass(frozen=True)
+class Standard:
+    """A standard: its key (the folder's name), its notation, and its walk for a tension member.
+
+    `hole_clearance` gives the clearance of a standard hole for a bolt diameter, both in mm.
+    The notation holds at least the symbol N_star, the design tension force.
+    """
+
+    key: str
+    notation: Notation
+    design: Walk
+    hole_clearance: Callable[[float], float]
+
+    @property
+    def source(self) -> Source:
+        return self.notation.source

@@ -1,0 +1,217 @@
+"""The walk through NZS 3404 for a tension member: section 7, then each end connection."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from tensionlib.calculation.inputs import Inputs
+from tensionlib.calculation.sheet import Entry
+from tensionlib.calculation.tables import Band, ThresholdTable
+from tensionlib.calculation.working import Working
+from tensionlib.standards.nzs3404 import bolts, detailing, factors, tension
+from tensionlib.standards.nzs3404.walk_bolted import bolted_end, joint_length
+from tensionlib.standards.nzs3404.walk_welded import shorter_run, welded_end
+
+_STANDARD_HOLE = "standard hole"
+HOLES = ThresholdTable(
+    "clearance of a standard hole",
+    "14.3.5.2, from memory",
+    {_STANDARD_HOLE: tuple(Band(limit, True, value) for limit, value in bolts.CLEARANCES)},
+)
+
+NOT_CHECKED = (
+    "the members and supports the gussets are fixed to, and the gussets' own welds or bolts to them",
+    "block shear of member and gusset (NZS 3404:1997 as remembered has no explicit rule for it)",
+    "compression, when the force reverses, in the member and the gussets",
+    "bending from self-weight, lateral load or an eccentricity that the factor k_te does not cover",
+    "earthquake: member category, overstrength of the brace and the detailing that follows from it",
+    "bolt tension, prying, and slip at serviceability",
+    "fatigue, brittle fracture, fire, corrosion and durability",
+    "stretch, sag and vibration",
+    "erection, access for tools and tolerance of the fabricated work",
+)
+
+
+@dataclass(frozen=True)
+class _Member:
+    """The member's lines that the ends read."""
+
+    force: Entry
+    A_g: Entry
+    f_u: Entry
+    phi: Entry
+    inputs: Inputs
+
+
+def hole_clearance(d_f: float) -> float:
+    """Clearance of a standard hole for a bolt of diameter `d_f`, both in mm. 14.3.5.2."""
+    clearance: float = HOLES.read(_STANDARD_HOLE, d_f)
+    return clearance
+
+
+def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry) -> None:
+    """Write the whole calculation: the member once, then each distinct end.
+
+    Parameters
+    ----------
+    work : Working
+    member : Inputs
+        Numbers L, A_g, t_y and, where known, r_min and d; tables f_y and f_u.
+    ends : tuple of Inputs
+        One (the same end twice) or two.
+    force : Entry
+        The design tension force N*, a line of `work`.
+    """
+    with work.part("Member"):
+        A_g = member.take(work, "A_g")
+        t_y = member.take(work, "t_y")
+        f_y = member.read(work, "f_y", t_y)
+        f_u = member.read(work, "f_u", t_y)
+        phi = work.fixed(
+            "phi", factors.MEMBER_IN_TENSION, factors.CLAUSE, note="member in tension"
+        )
+        N_ty = work.step(tension.gross_yielding, A_g, f_y)
+        phiN_ty = work.step(tension.design_gross_yielding, phi, N_ty)
+        work.check("gross section yield", force, phiN_ty, "7.1, 7.2")
+        _slenderness(work, member)
+
+    lines = _Member(force, A_g, f_u, phi, member)
+    capacities = [phiN_ty]
+    for end in ends:
+        with work.part(end.choice("label") + "Net section"):
+            fracture = _net_section(work, lines, end)
+            if fracture is not None:
+                capacities.append(fracture)
+
+    with work.part("Design action on the connection"):
+        phiN_t = work.least(
+            "phiN_t", *capacities, title="design capacity of the member", clause="7.1"
+        )
+        N_min = work.step(bolts.minimum_action, phiN_t)
+        N_c = work.greatest(
+            "N_star_c",
+            force,
+            N_min,
+            title="design action on the connection",
+            clause=bolts.MINIMUM_ACTION_CLAUSE,
+        )
+
+    for end in ends:
+        connect = bolted_end if end.choice("kind") == "bolted" else welded_end
+        connect(work, end, N_c, f_u)
+    work.leaves_out(*NOT_CHECKED)
+
+
+def _slenderness(work: Working, member: Inputs) -> None:
+    if not member.has("r_min"):
+        work.note("No radius of gyration is stated for the section: no advice on slenderness.")
+        return
+    L = member.take(work, "L")
+    slenderness = work.step(tension.slenderness, L, member.take(work, "r_min"))
+    limit = work.fixed(
+        "lambda_max",
+        detailing.ADVISED_SLENDERNESS,
+        "practice",
+        note="advice for members in tension; common practice, no source",
+    )
+    work.check("slenderness", slenderness, limit, "practice", kind="advice")
+
+
+def _net_section(work: Working, member: _Member, end: Inputs) -> Entry | None:
+    """Net area, k_te and the check; gives the design capacity, or None where not covered."""
+    A_d = _deduction(work, end)
+    if A_d is None:
+        work.note("Welded end without holes: the net area is the gross area.", "9.1.10")
+        A_n = member.A_g
+    else:
+        A_n = work.step(tension.net_area, member.A_g, A_d)
+    k_te = _factor(work, member.inputs, end)
+    if k_te is None:
+        return None
+    N_tu = work.step(tension.net_fracture, k_te, A_n, member.f_u)
+    phiN_tu = work.step(tension.design_net_fracture, member.phi, N_tu)
+    work.check("net section rupture", member.force, phiN_tu, "7.1, 7.2")
+    return phiN_tu
+
+
+def _deduction(work: Working, end: Inputs) -> Entry | None:
+    """The area lost to holes or slots, or None where there are none."""
+    if end.choice("to") == "slot":
+        return work.step(
+            tension.deduction_slots,
+            *(end.take(work, name) for name in ("n_s", "t", "t_p", "c_s")),
+        )
+    if end.choice("kind") == "welded":
+        return None
+    d_f = end.take(work, "d_f")
+    c_h = (
+        end.take(work, "c_h")
+        if end.has("c_h")
+        else work.upto(HOLES, _STANDARD_HOLE, "c_h", d_f, clause="14.3.5.2")
+    )
+    d_h = work.step(tension.hole_diameter, d_f, c_h)
+    end.keep("d_h", d_h)
+    n_e, t = end.take(work, "n_e"), end.take(work, "t")
+    if end.choice("pattern") != "staggered":
+        return work.step(tension.deduction_straight, n_e, end.take(work, "n_l"), d_h, t)
+    s = _zigzag_step(work, end)
+    one = work.step(tension.deduction_one_hole, n_e, d_h, t)
+    both = work.step(tension.deduction_zigzag, n_e, d_h, t, s, end.take(work, "s_g"))
+    return work.greatest(
+        "A_d", one, both, title="area deducted: the greater of the lines", clause="9.1.10"
+    )
+
+
+def _zigzag_step(work: Working, end: Inputs) -> Entry:
+    s_2 = end.take(work, "s_2")
+    if not end.has("s_p"):
+        return end.keep("s", s_2)
+    s_3 = work.step(tension.stagger_to_next, end.take(work, "s_p"), s_2)
+    title = "smaller stagger of the zigzag's steps"
+    return end.keep("s", work.least("s", s_2, s_3, title=title, clause="9.1.10"))
+
+
+def connection_case(end: Inputs) -> str:
+    """The row of `tension.CASES` for this end, or "" where the standard's table has none."""
+    shape, to = end.choice("shape"), end.choice("to")
+    if shape in ("double angle", "double channel"):
+        return "back to back"
+    if shape == "angle":
+        return "angle by short leg" if to == "short leg" else "angle by one leg"
+    if to == "both flanges":
+        return "both flanges"
+    return {
+        ("channel", "web"): "channel by web",
+        ("tee", "flange"): "tee by flange",
+        ("flat", "plate"): "concentric",
+        ("round", "bar"): "concentric",
+    }.get((shape, to), "")
+
+
+def _factor(work: Working, member: Inputs, end: Inputs) -> Entry | None:
+    """The line for k_te, or None where the standard does not cover the case."""
+    if end.has("k_te"):
+        return end.take(work, "k_te")
+    key = connection_case(end)
+    why = (
+        f"Table 7.3.2 has no row for this section ({end.choice('shape')}) connected by its"
+        f" {end.choice('to')}: state k_te with the reason for it, or connect another element"
+    )
+    if key == "both flanges" and not _covers_depth(work, member, end):
+        key = ""
+        why = "Table 7.3.2 asks for a joint at least as long as the section is deep"
+    if not key:
+        work.not_covered("net section rupture", why, "7.3.2")
+        return None
+    case = tension.CASES[key]
+    return work.fixed(
+        "k_te", case.k_te, case.clause, note=case.words, source=f"{case.clause}, {case.sure}"
+    )
+
+
+def _covers_depth(work: Working, member: Inputs, end: Inputs) -> bool:
+    d = member.take(work, "d")
+    if end.choice("kind") == "bolted":
+        length = joint_length(work, end)
+        return length is not None and work.holds(tension.joint_covers_depth, length, d)
+    return work.holds(tension.weld_covers_depth, shorter_run(work, end), d)

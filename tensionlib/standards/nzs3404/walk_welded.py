@@ -1,0 +1,107 @@
+"""The walk through NZS 3404 for a welded end: welds, gusset, weld limits."""
+
+from __future__ import annotations
+
+from tensionlib.calculation.inputs import Inputs
+from tensionlib.calculation.sheet import Entry
+from tensionlib.calculation.tables import Band, ThresholdTable
+from tensionlib.calculation.working import Working
+from tensionlib.standards.nzs3404 import factors, gusset, welds
+from tensionlib.standards.nzs3404.walk_gusset import check_gusset
+
+LEGS = ThresholdTable(
+    "least leg of a fillet weld",
+    "Table 9.7.3.2, from memory, sure",
+    {"fillet weld": tuple(Band(limit, True, value) for limit, value in welds.LEAST_LEGS)},
+)
+LAP_CLAUSE = "Table 9.7.3.10(2)"
+
+
+def welded_end(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
+    """Write the checks of a welded end for the design action on the connection."""
+    label = end.choice("label")
+    with work.part(label + "Welds"):
+        _welds(work, end, N_c)
+    with work.part(label + "Gusset"):
+        t_p = end.take(work, "t_p")
+        f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
+        b_d = work.step(gusset.spread_welds, end.take(work, "b"), shorter_run(work, end))
+        check_gusset(work, end, N_c, b_d, f_yp, f_up)
+    with work.part(label + "Weld limits"):
+        _limits(work, end)
+
+
+def shorter_run(work: Working, end: Inputs) -> Entry:
+    """The shorter of the two runs along the force, written once."""
+    return _run(work, end, "l_min")
+
+
+def _run(work: Working, end: Inputs, which: str) -> Entry:
+    known = end.kept(which)
+    if known is not None:
+        return known
+    runs = end.take(work, "l_1"), end.take(work, "l_2")
+    pick, title = (
+        (work.least, "shorter run") if which == "l_min" else (work.greatest, "longer run")
+    )
+    return end.keep(which, pick(which, *runs, title=title))
+
+
+def _welds(work: Working, end: Inputs, N_c: Entry) -> None:
+    quality = end.choice("quality")
+    phi = work.fixed(
+        "phi",
+        factors.FILLET_WELD[quality],
+        factors.CLAUSE,
+        note=f"fillet weld of quality {quality}",
+    )
+    t_t = work.step(welds.throat, end.take(work, "t_w"))
+    l_1, l_2 = end.take(work, "l_1"), end.take(work, "l_2")
+    if end.choice("to") in ("slot", "bar"):
+        l_w = work.step(welds.length_four_runs, l_1, l_2)
+    elif end.has("l_t"):
+        l_w = work.step(
+            welds.length_three_runs, end.take(work, "n_e"), l_1, l_2, end.take(work, "l_t")
+        )
+    else:
+        l_w = work.step(welds.length_two_runs, end.take(work, "n_e"), l_1, l_2)
+    k_r = _lap_factor(work, end)
+    v_w = work.step(welds.fillet, end.take(work, "f_uw"), t_t, k_r)
+    capacity = work.step(welds.design_fillet, phi, v_w, l_w)
+    work.check("weld", N_c, capacity, "9.7.3.10")
+    work.assume(
+        f"{end.choice('label')}every run of weld carries the same force per unit length; the weld's"
+        " centroid may stand off the member's line (accepted for static loads, common practice)"
+    )
+
+
+def _lap_factor(work: Working, end: Inputs) -> Entry:
+    longest = _run(work, end, "l_max")
+    if work.holds(welds.short_lap, longest, yes="no reduction"):
+        return work.fixed("k_r", 1.0, LAP_CLAUSE, note="short lap")
+    if work.holds(welds.middle_lap, longest, yes="reduction by length"):
+        return work.step(welds.long_lap_factor, longest)
+    return work.fixed("k_r", 0.62, LAP_CLAUSE, note="longest laps")
+
+
+def _limits(work: Working, end: Inputs) -> None:
+    t, t_p, t_w = (end.take(work, name) for name in ("t", "t_p", "t_w"))
+    t_thick = work.greatest("t_thick", t, t_p, title="thicker of the parts joined")
+    least = work.upto(LEGS, "fillet weld", "t_wmin", t_thick, clause="Table 9.7.3.2")
+    work.check("least weld size", least, t_w, "Table 9.7.3.2", kind="detailing")
+    if end.choice("to") not in ("slot", "bar"):
+        thin = work.holds(welds.thin_edge, t, yes="as thick as the edge", no="1 mm less")
+        most = work.step(welds.leg_limit_thin if thin else welds.leg_limit, t)
+        work.check("greatest weld size", t_w, most, "9.7.3.3", kind="detailing")
+    shortest = work.step(welds.least_length, t_w)
+    work.check("least weld length", shortest, shorter_run(work, end), "9.7.3.5", kind="detailing")
+    if not end.has("l_t") and end.choice("to") not in ("slot", "bar"):
+        work.check(
+            "weld length over the width between runs",
+            end.take(work, "b"),
+            shorter_run(work, end),
+            "practice",
+            kind="advice",
+            note="side welds alone: each at least as long as the distance between them;"
+            " common practice, no source",
+        )
