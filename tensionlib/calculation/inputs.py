@@ -39,7 +39,9 @@ class Inputs:
         try:
             return self.choices[name]
         except KeyError:
-            raise DataNotFoundError(f"choice: {name!r} is not among {sorted(self.choices)}") from None
+            raise DataNotFoundError(
+                f"choice: {name!r} is not among {sorted(self.choices)}"
+            ) from None
 
     def has(self, name: str) -> bool:
         """Whether the number was stated at all: a choice of the user's, not its size."""
@@ -51,7 +53,7 @@ class Inputs:
         return work.upto(table, row, symbol or name, by)
 
     def take(self, work: Working, name: str, symbol: str | Symbol | None = None) -> Entry:
-        """The number `name` as an input line of `work`, under `symbol` (the same name unless given).
+        """The number `name` as an input line of `work`, under `symbol` (its own name unless given).
 
         Taken again, it is the same line.
         """

@@ -243,9 +243,7 @@ class Sheet:
                 raise InputError(f"inputs: {what} {', '.join(sorted(names))}")
         values: list[Any] = []
         for line in self.lines:
-            values.append(
-                inputs[line.key] if isinstance(line, Given) else line.evaluate(values)
-            )
+            values.append(inputs[line.key] if isinstance(line, Given) else line.evaluate(values))
         return tuple(values)
 
     def fill(self, inputs: Mapping[str, Any]) -> Filled:
@@ -260,7 +258,9 @@ class Sheet:
 
         shapes = {np.shape(value) for value in inputs.values() if np.ndim(value)}
         if len(shapes) > 1:
-            raise InputError(f"inputs: arrays of different shapes {sorted(shapes)}; give one length")
+            raise InputError(
+                f"inputs: arrays of different shapes {sorted(shapes)}; give one length"
+            )
         shape = shapes.pop() if shapes else (1,)
         values = self.evaluate(inputs)
         follows = np.ones(shape, dtype=np.bool_)

@@ -52,9 +52,7 @@ class ThresholdTable:
             if band.holds(by):
                 return index
         last = self.rows[row][-1]
-        raise InputError(
-            f"{self.name}, {row}: got {by:g} mm; the table ends at {last.limit:g} mm"
-        )
+        raise InputError(f"{self.name}, {row}: got {by:g} mm; the table ends at {last.limit:g} mm")
 
     def read(self, row: str, by: Any) -> Any:
         """The value of `row` at `by`, a float or an array of shape (n,)."""

@@ -318,9 +318,7 @@ class Working:
     def _symbol(self, symbol: str | Symbol) -> Symbol:
         return self.notation[symbol] if isinstance(symbol, str) else symbol
 
-    def _indices(
-        self, what: str, names: Sequence[str], args: Sequence[Entry]
-    ) -> tuple[int, ...]:
+    def _indices(self, what: str, names: Sequence[str], args: Sequence[Entry]) -> tuple[int, ...]:
         if len(args) != len(names):
             raise InputError(
                 f"{what}: got {len(args)} entries; {len(names)} are due: {', '.join(names)}"

@@ -38,7 +38,9 @@ class _Stated:
         if value is None:
             return
         above = 0.0 if at_least is None else None
-        quantity = door(name, value, LENGTH, above=above, at_least=at_least, example=example or None)
+        quantity = door(
+            name, value, LENGTH, above=above, at_least=at_least, example=example or None
+        )
         object.__setattr__(self, name, quantity)
 
     def but(self, **changes: Any) -> Any:
@@ -172,9 +174,13 @@ class Bolted(_Stated):
         self._length("stagger", at_least=0.0, example="35 mm")
         self._length("clearance", at_least=0.0, example="2 mm")
         if self.per_line > 1 and self.pitch is None:
-            raise InputError("pitch: missing; two or more bolts a line need it, for example '70 mm'")
+            raise InputError(
+                "pitch: missing; two or more bolts a line need it, for example '70 mm'"
+            )
         if self.lines == 2 and self.line_spacing is None:
-            raise InputError("line_spacing: missing; two lines of bolts need it, for example '60 mm'")
+            raise InputError(
+                "line_spacing: missing; two lines of bolts need it, for example '60 mm'"
+            )
         if self.lines == 1 and self.stagger is not None and self.stagger.internal > 0.0:  # type: ignore[union-attr]
             raise InputError("stagger: given for one line of bolts; it needs lines=2")
         if self.lines == 1 and self.line_spacing is not None:
@@ -260,7 +266,9 @@ class Welded(_Stated):
             stated = factor("k_te", self.k_te, above=0.0, at_most=1.0)
             object.__setattr__(self, "k_te", stated)
             if not isinstance(self.k_te_reason, str) or not self.k_te_reason.strip():
-                raise InputError("k_te_reason: missing; a stated k_te needs the reason that is printed")
+                raise InputError(
+                    "k_te_reason: missing; a stated k_te needs the reason that is printed"
+                )
 
 
 End = Bolted | Welded

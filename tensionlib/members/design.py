@@ -100,9 +100,7 @@ def design(
     )
 
 
-def _force(
-    force: Quantity | str | Entry, notation: Notation, origin: str
-) -> tuple[Working, Entry]:
+def _force(force: Quantity | str | Entry, notation: Notation, origin: str) -> tuple[Working, Entry]:
     if isinstance(force, Entry):
         if not isinstance(force.owner, Working):
             raise InputError("force: this entry belongs to no working")
@@ -151,8 +149,12 @@ def _materials(member: Member) -> list[tuple[Source, str]]:
         found.append((Source(plate.standard, plate.standard, plate.known), f"gusset: {plate.name}"))
         if isinstance(end, Bolted):
             fastener = bolt(end.bolts)
-            found.append((Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}"))
+            found.append(
+                (Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}")
+            )
         else:
             metal = weld_metal(end.metal)
-            found.append((Source(metal.source, metal.source, "from memory"), f"welds: {metal.name}"))
+            found.append(
+                (Source(metal.source, metal.source, "from memory"), f"welds: {metal.name}")
+            )
     return list(dict.fromkeys(found))

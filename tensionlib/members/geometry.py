@@ -84,9 +84,7 @@ def seat(section: Section, end: End) -> Seat:
         plies=2 if double or both else 1,
         gussets=2 if both else 1,
         planes=2 if double else 1,
-        lines_from="heel"
-        if end.to in _LEGS or (both and section.shape == "channel")
-        else "middle",
+        lines_from="heel" if end.to in _LEGS or (both and section.shape == "channel") else "middle",
         free_edge=end.to != "web",
     )
 

@@ -50,7 +50,9 @@ class Member:
                 raise InputError(f"{name}: got {getattr(self, name)!r}; text is due, as 'RB1'")
         if not self.mark.strip():
             raise InputError("mark: empty; give the member's mark, for example 'RB1'")
-        object.__setattr__(self, "length", door("length", self.length, LENGTH, above=0.0, example="4600 mm"))
+        object.__setattr__(
+            self, "length", door("length", self.length, LENGTH, above=0.0, example="4600 mm")
+        )
         if isinstance(self.section, str):
             object.__setattr__(self, "section", section(self.section))
         elif not isinstance(self.section, Section):

@@ -65,8 +65,8 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
 
 
 def _length(value: Any) -> float:
-    length: float = value.internal
-    return length
+    """The length of an end's or member's field, which the door has made a quantity, in mm."""
+    return float(value.internal)
 
 
 def _thickest(section: Section) -> float:
@@ -92,10 +92,11 @@ def _plate(plate: Gusset) -> dict[str, Number]:
 @cache
 def _table(steel: Grade, strength: str) -> ThresholdTable:
     bands = tuple(
-        Band(row.limit, row.closed, row.f_y if strength == "f_y" else row.f_u)
-        for row in steel.rows
+        Band(row.limit, row.closed, row.f_y if strength == "f_y" else row.f_u) for row in steel.rows
     )
-    return ThresholdTable(f"{strength} by thickness", f"{steel.standard}, {steel.known}", {steel.name: bands})
+    return ThresholdTable(
+        f"{strength} by thickness", f"{steel.standard}, {steel.known}", {steel.name: bands}
+    )
 
 
 def _tables(steel: Grade, f_y: str, f_u: str) -> dict[str, tuple[ThresholdTable, str]]:

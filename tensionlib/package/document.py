@@ -150,9 +150,9 @@ def identity(record: Record) -> tuple[str, str]:
     return str(record["mark"]), str(record.get("provenance", {}).get("inputs_hash", ""))
 
 
-def read(notebook: Mapping[str, Any], name: str = "notebook", folder: Path | None = None) -> (
-    Document
-):
+def read(
+    notebook: Mapping[str, Any], name: str = "notebook", folder: Path | None = None
+) -> Document:
     """The document an executed notebook (nbformat 4) makes.
 
     Raises
@@ -345,6 +345,7 @@ _ENVIRONMENT = re.compile(
 _TOKEN = re.compile(
     r"\\\\\*?(?:\[[^\]]*\])?|\\(?:begin|end)\{[^}]*\}|\\.|[{}&]|[^\\{}&]+|\\", re.DOTALL
 )
+_RELATIONS = ("=", "<", ">", r"\l", r"\g", r"\a", r"\n")
 
 
 def _latex(text: str, number: int) -> Block:
@@ -368,10 +369,11 @@ def _latex(text: str, number: int) -> Block:
 def _rows(body: str) -> Iterator[str]:
     r"""The rows of an aligned block: parted at ``\\``, but not inside braces or environments.
 
-    Of the ``&`` of a row every second one parts columns and becomes a space; the others align.
+    A ``&`` that aligns goes; one between columns becomes a space.
     """
     depth, row, marks = 0, "", 0
-    for token in _TOKEN.findall(body):
+    tokens = _TOKEN.findall(body)
+    for token, following in zip(tokens, [*tokens[1:], ""], strict=True):
         if depth == 0 and token.startswith("\\\\"):
             yield row
             row, marks = "", 0
@@ -382,7 +384,7 @@ def _rows(body: str) -> Iterator[str]:
             depth -= 1
         if depth == 0 and token == "&":
             marks += 1
-            row += "" if marks % 2 else r"\qquad "
+            row += "" if marks == 1 or following.lstrip().startswith(_RELATIONS) else r"\qquad "
         else:
             row += token
     yield row
@@ -416,10 +418,18 @@ def _attachments(
     record = json.dumps(records, sort_keys=True, indent=1, ensure_ascii=False)
     found = [
         Attachment(
-            f"{name}.ipynb", source.encode(), "application/x-ipynb+json", "source", "executed notebook"
+            name=f"{name}.ipynb",
+            data=source.encode(),
+            mimetype="application/x-ipynb+json",
+            relationship="source",
+            description="executed notebook",
         ),
         Attachment(
-            "record.json", record.encode(), "application/json", "data", "record of every number"
+            name="record.json",
+            data=record.encode(),
+            mimetype="application/json",
+            relationship="data",
+            description="record of every number",
         ),
     ]
     named = [str(project.get("design_file") or "") for _, project in projects]

@@ -21,7 +21,7 @@ except ImportError as missing:
     ) from missing
 
 
-class PackageExporter(Exporter):  # type: ignore[misc]
+class PackageExporter(Exporter):
     """An executed notebook as a calculation package: PDF/A-3b with its sources attached."""
 
     output_mimetype = "application/pdf"
@@ -34,10 +34,8 @@ class PackageExporter(Exporter):  # type: ignore[misc]
     def _file_extension_default(self) -> str:
         return ".pdf"
 
-    def from_notebook_node(
-        self, nb: NotebookNode, resources: Any = None, **more: Any
-    ) -> tuple[bytes, dict[str, Any]]:
-        """The PDF of a notebook.
+    def from_notebook_node(self, nb: NotebookNode, resources: Any = None, **more: Any) -> Any:
+        """The PDF of a notebook: its bytes, and the resources.
 
         Pictures and files to attach are looked for in the folder that `resources` names
         (``metadata.path``, as nbconvert sets it), and nowhere without one.
@@ -51,8 +49,8 @@ class PackageExporter(Exporter):  # type: ignore[misc]
         """
         ready, resources = super().from_notebook_node(nb, resources, **more)
         about = resources.get("metadata") or {}
-        path, name = about.get("path"), about.get("name") or "notebook"
-        # An empty path is the working folder when nbconvert was given a bare file name.
-        known = "path" in about and path is not None
-        document = read(ready, str(name), Path(path) if known else None)
+        path = about.get("path")
+        # An empty path is the working folder: nbconvert was given a bare file name.
+        folder = None if path is None else Path(str(path))
+        document = read(ready, str(about.get("name") or "notebook"), folder)
         return typeset(document, self.paper or None), resources

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import os
 from pathlib import Path
+from typing import Any
 
 from tensionlib.errors import InputError, TensionlibError
 from tensionlib.package.document import Record, read
@@ -79,8 +80,10 @@ def issue(
         ) from missing
     from tensionlib.package.exporter import PackageExporter
 
+    read_notebook: Any = nbformat.read
+    exporter_class: Any = PackageExporter
     try:
-        notebook = nbformat.read(source, as_version=4)
+        notebook = read_notebook(source, as_version=4)
     except (nbformat.reader.NotJSONError, nbformat.ValidationError, UnicodeDecodeError) as error:
         reason = str(error).splitlines()[0][:200]
         raise InputError(f"notebook: {source.name} is not a notebook: {reason}") from None
@@ -88,7 +91,7 @@ def issue(
     failing = read(executed, source.stem, source.parent).failing
     if failing and not allow_failing:
         raise NotPassingError(failing)
-    exporter = PackageExporter(paper=paper or "")
+    exporter = exporter_class(paper=paper or "")
     about = {"metadata": {"name": source.stem, "path": str(source.parent)}}
     pdf, _ = exporter.from_notebook_node(executed, about)
     write_atomic(target, pdf)

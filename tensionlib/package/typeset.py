@@ -142,9 +142,8 @@ def _data(document: Document, paper: str | None, pieces: _Pieces) -> dict[str, A
         "head": {
             "job": _short(project["job_number"], 24),
             "title": _short(title, 70),
-            "foot": _short(
-                ", ".join(filter(None, (project["client"], project["site"]))), 90
-            ),
+            "revision": _short(project["revision"], 16),
+            "foot": _short(", ".join(filter(None, (project["client"], project["site"]))), 90),
         },
         "math": maths,
         "blocks": blocks,
@@ -198,7 +197,9 @@ def _project(record: Record) -> dict[str, Any]:
         project["standard"] = _line(standard.get("name"))
     project["notes"] = [_line(note) for note in record.get("notes") or []]
     keys = ("revision", "date", "description", "made_by", "checked_by")
-    revisions = [{key: _line(row.get(key)) for key in keys} for row in record.get("revisions") or []]
+    revisions = [
+        {key: _line(row.get(key)) for key in keys} for row in record.get("revisions") or []
+    ]
     present = {key: project.get(key, "") for key in keys}
     project["revisions"] = revisions or [{**present, "description": "this revision"}]
     return project
@@ -229,7 +230,9 @@ def _calculation(calculated: Calculated, pieces: _Pieces) -> dict[str, Any]:
         svg = str(sketch["svg"])
         sketches.append(
             {
-                "file": pieces.picture("svg", svg.encode(), f"cell {cell}, {record['mark']}, sketch"),
+                "file": pieces.picture(
+                    "svg", svg.encode(), f"cell {cell}, {record['mark']}, sketch"
+                ),
                 "title": _line(sketch.get("title")),
                 "alt": _line(sketch.get("alt")) or "sketch",
                 "upright": _upright(svg),
@@ -240,7 +243,7 @@ def _calculation(calculated: Calculated, pieces: _Pieces) -> dict[str, Any]:
         "title": _line(record.get("title")),
         "headline": _line(record["headline"]),
         "word": _line(record["verdict"]["word"]),
-        "section": _line(record.get("subject")),
+        "section": _line(record.get("subject")).partition(", ")[0],
         "force": _force(record),
         "governing": {
             "name": _line(governing.get("name")),
@@ -303,7 +306,9 @@ def _force(record: Record) -> str:
 
 
 def _upright(svg: str) -> bool:
-    box = re.search(r"""viewBox\s*=\s*["']\s*[-\d.]+[\s,]+[-\d.]+[\s,]+([\d.]+)[\s,]+([\d.]+)""", svg)
+    box = re.search(
+        r"""viewBox\s*=\s*["']\s*[-\d.]+[\s,]+[-\d.]+[\s,]+([\d.]+)[\s,]+([\d.]+)""", svg
+    )
     return box is not None and float(box[2]) >= 0.8 * float(box[1])
 
 
@@ -426,8 +431,8 @@ def _blocks(
                     "members": [places[identity(one.record)] for one in block.members],
                 }
             )
-            for one in block.members:
-                calculation(one.record, under)
+            for member in block.members:
+                calculation(member.record, under)
     return printed
 
 
@@ -471,6 +476,7 @@ def _compile(main: str, data: Mapping[str, Any], files: Mapping[str, bytes]) -> 
         raise TensionlibError(
             'setting a package needs typst: pip install "tensionlib[package]"'
         ) from missing
+    year, month, day = data["date"]
     # The typesetter sees this folder and nothing else of the machine.
     with tempfile.TemporaryDirectory() as name:
         folder = Path(name)
@@ -486,7 +492,7 @@ def _compile(main: str, data: Mapping[str, Any], files: Mapping[str, bytes]) -> 
                     root=folder,
                     pdf_standards=["a-3b"],
                     ignore_system_fonts=True,
-                    timestamp=datetime.datetime(*data["date"], tzinfo=datetime.UTC),
+                    timestamp=datetime.datetime(year, month, day, tzinfo=datetime.UTC),
                 )
             )
         except typst.TypstError as error:

@@ -58,8 +58,7 @@ def of(calc: Calculation) -> Row:
         "not_checked": list(calc.not_checked),
         "notation": page.notation(),
         "sources": [
-            {"name": source.name, "use": use, "known": source.known}
-            for source, use in calc.sources
+            {"name": source.name, "use": use, "known": source.known} for source, use in calc.sources
         ],
         "sketches": [
             {"title": sketch.title, "svg": sketch.svg, "alt": sketch.alt}
@@ -293,7 +292,10 @@ class _Page:
             if len(symbols) == 1:
                 return [symbols[0].latex], [symbols[0].text]
             return (
-                [_call(name, [s.latex for s in symbols]), _call(name, self._pick(self._latex, line))],
+                [
+                    _call(name, [s.latex for s in symbols]),
+                    _call(name, self._pick(self._latex, line)),
+                ],
                 [
                     f"{name}({'; '.join(s.text for s in symbols)})",
                     f"{name}({'; '.join(self._pick(self._text, line))})",
@@ -317,7 +319,8 @@ class _Page:
             latex_symbols[name] = latex_numbers[name] = shown[0]
             text_symbols[name] = text_numbers[name] = shown[1]
         numeric = template.numeric(latex_numbers)
-        if not formula.function.__module__.startswith("tensionlib."):
+        own = formula.function.__module__.startswith("tensionlib.")
+        if not own and math.isfinite(self.values_[index]):
             self._prove(index, line, numeric)
         return (
             [template.symbolic(latex_symbols), numeric],
@@ -350,7 +353,10 @@ class _Page:
         by = self._symbol(line.by)
         bands = line.table.rows[line.row]
         which = line.table.band(line.row, self.values_[line.by])
-        write = lambda limit: format_value(limit, by.role, self.calc.view)  # noqa: E731
+
+        def write(limit: float) -> str:
+            return format_value(limit, by.role, self.calc.view)
+
         tested = f"{by.text} = {self._text[line.by]}"
         if which > 0:
             before = bands[which - 1]

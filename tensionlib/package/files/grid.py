@@ -40,7 +40,10 @@ def read_delimited(text: str, recognises: Callable[[str], bool]) -> list[Row]:
     """
 
     def known(delimiter: str) -> int:
-        first: list[Cell] = next((cells for _, cells in _records(text, delimiter)), [])
+        try:
+            first: list[Cell] = next((cells for _, cells in _records(text, delimiter)), [])
+        except UnreadableError:
+            return 0
         return sum(recognises(cell.text) for cell in first)
 
     return list(_records(text, max(_DELIMITERS, key=known)))

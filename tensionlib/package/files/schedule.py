@@ -280,7 +280,10 @@ class _Reader:
     def _read_header(self, place: int, text: str, headers: _Headers) -> None:
         found = headers.column(text)
         if found is None:
-            near = did_you_mean(split_unit(text)[0], headers.accepted)
+            name = split_unit(text)[0]
+            near = did_you_mean(name, headers.accepted)
+            # A misspelt column may hold what the rows would be taken without.
+            self._lost.update(column for column in COLUMNS if did_you_mean(name, [column]))
             self._tell(
                 self._top,
                 text,
@@ -292,6 +295,7 @@ class _Reader:
             return
         column, unit = found
         if column in self._headings:
+            self._lost.add(column)
             self._tell(
                 self._top,
                 text,
@@ -350,8 +354,10 @@ class _Reader:
 
     def _check_required(self, required: tuple[str, ...]) -> None:
         for column in required:
-            if column in self._headings or column in self._lost or self._default(column)[0]:
+            if column in self._headings or self._default(column)[0]:
                 continue
+            if column in self._setup.columns:
+                continue  # told where its header was not found
             self._lost.add(column)
             reason = f"missing; add a column headed {_header(column)!r}"
             if column == "end":

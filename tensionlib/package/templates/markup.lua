@@ -33,6 +33,18 @@ local function scheme(target)
   return (target:match("^%s*([%a][%w+.-]*):") or ""):lower()
 end
 
+-- Formulas go through the template, which breaks those that are wider than the page.
+local function wrapped(math)
+  local name = math.mathtype == "InlineMath" and "inline-formula" or "display-formula"
+  return { pandoc.RawInline("typst", "#" .. name .. "["), math, pandoc.RawInline("typst", "];") }
+end
+
+-- Tables stand at the left like everything else; pandoc would centre them.
+local function left_table(found)
+  local written = pandoc.write(pandoc.Pandoc { found }, "typst")
+  return pandoc.RawBlock("typst", (written:gsub("^#figure%(%s*align%(center%)", "#figure(align(left)", 1)))
+end
+
 local function cell(markdown)
   local images, headings, problems = {}, {}, {}
   local log, markup = pandoc.log.silence(function()
@@ -71,6 +83,7 @@ local function cell(markdown)
         return pandoc.Header(header.level, header.content)
       end,
     }
+    read = read:walk { Math = wrapped, Table = left_table }
     return pandoc.write(read, "typst")
   end)
   for _, line in ipairs(warnings(log)) do problems[#problems + 1] = line end

@@ -96,7 +96,9 @@ def ply_tear_out(a_e: Any, t: Any, f_u: Any) -> Any:
     return a_e * t * f_u
 
 
-@formula("a_e1", NZS, title="ahead of the end bolt: hole edge to end, plus half a bolt", clause="9.3.2.4")
+@formula(
+    "a_e1", NZS, title="ahead of the end bolt: hole edge to end, plus half a bolt", clause="9.3.2.4"
+)
 def clear_end(e_1: Any, d_h: Any, d_f: Any) -> Any:
     """Edge of the hole to the end of the ply, plus half the bolt diameter [length]. 9.3.2.4."""
     return e_1 - d_h / 2 + d_f / 2

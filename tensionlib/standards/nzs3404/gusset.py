@@ -17,13 +17,17 @@ SPREAD = Constant("30 deg")
 PRACTICE = "common practice, no source"
 
 
-@formula("b_d", NZS, title="width at the last bolts, 30° each side", clause="practice", known=PRACTICE)
+@formula(
+    "b_d", NZS, title="width at the last bolts, 30° each side", clause="practice", known=PRACTICE
+)
 def spread_bolts(n_l: Any, s_g: Any, L_j: Any) -> Any:
     """Width to which the force spreads over two lines of bolts [length]."""
     return (n_l - 1) * s_g + 2 * L_j * tan(SPREAD)
 
 
-@formula("b_d", NZS, title="width at the last bolt, 30° each side", clause="practice", known=PRACTICE)
+@formula(
+    "b_d", NZS, title="width at the last bolt, 30° each side", clause="practice", known=PRACTICE
+)
 def spread_line(L_j: Any) -> Any:
     """Width to which the force spreads over one line of bolts [length]."""
     return 2 * L_j * tan(SPREAD)
@@ -36,7 +40,11 @@ def spread_row(n_l: Any, s_g: Any) -> Any:
 
 
 @formula(
-    "b_d", NZS, title="width at the end of the welds, 30° each side", clause="practice", known=PRACTICE
+    "b_d",
+    NZS,
+    title="width at the end of the welds, 30° each side",
+    clause="practice",
+    known=PRACTICE,
 )
 def spread_welds(b: Any, l_min: Any) -> Any:
     """Width to which the force spreads along two runs of weld a width b apart [length]."""

@@ -101,7 +101,9 @@ NZS = Notation(
         Symbol("f_up", "f_{up}", STRESS, "tensile strength of the gusset"),
         Symbol("e_p", "e_{p}", LENGTH, "end distance in the gusset"),
         Symbol("e_s", "e_{s}", LENGTH, "side edge distance in the gusset"),
-        Symbol("a_p1", "a_{p1}", LENGTH, "gusset: clear length ahead of the last bolt plus half a bolt"),
+        Symbol(
+            "a_p1", "a_{p1}", LENGTH, "gusset: clear length ahead of the last bolt plus half a bolt"
+        ),
         Symbol("a_p2", "a_{p2}", LENGTH, "gusset: clear length to the next hole plus half a bolt"),
         Symbol("a_p", "a_{p}", LENGTH, "gusset: least a_e of the pattern"),
         Symbol("V_pb", "V_{pb}", FORCE, "nominal capacity of the gusset in bearing, a bolt"),
@@ -112,8 +114,12 @@ NZS = Notation(
         Symbol("A_np", "A_{np}", AREA, "net area of the gusset on the width that counts"),
         Symbol("N_py", "N_{py}", FORCE, "nominal capacity of the gusset, yielding"),
         Symbol("N_pu", "N_{pu}", FORCE, "nominal capacity of the gusset, fracture"),
-        Symbol("phiN_py", _PHI + "N_{py}", FORCE, "design capacity of the gusset, yielding", "φN_py"),
-        Symbol("phiN_pu", _PHI + "N_{pu}", FORCE, "design capacity of the gusset, fracture", "φN_pu"),
+        Symbol(
+            "phiN_py", _PHI + "N_{py}", FORCE, "design capacity of the gusset, yielding", "φN_py"
+        ),
+        Symbol(
+            "phiN_pu", _PHI + "N_{pu}", FORCE, "design capacity of the gusset, fracture", "φN_pu"
+        ),
         # Welds
         Symbol("t_w", "t_{w}", LENGTH, "leg size of the fillet weld"),
         Symbol("t_t", "t_{t}", LENGTH, "design throat of the fillet weld"),

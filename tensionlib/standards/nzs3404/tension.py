@@ -125,7 +125,5 @@ CASES: dict[str, ConnectionCase] = {
     "back to back": ConnectionCase(
         1.0, "two equal components on opposite sides of the gusset, tied together as 7.4 asks"
     ),
-    "concentric": ConnectionCase(
-        1.0, "force spread evenly over the whole section", clause="7.3.1"
-    ),
+    "concentric": ConnectionCase(1.0, "force spread evenly over the whole section", clause="7.3.1"),
 }

@@ -20,7 +20,7 @@ HOLES = ThresholdTable(
 )
 
 NOT_CHECKED = (
-    "the members and supports the gussets are fixed to, and the gussets' own welds or bolts to them",
+    "the members and supports the gussets are fixed to, and the gussets' own fixing to them",
     "block shear of member and gusset (NZS 3404:1997 as remembered has no explicit rule for it)",
     "compression, when the force reverses, in the member and the gussets",
     "bending from self-weight, lateral load or an eccentricity that the factor k_te does not cover",
@@ -67,9 +67,7 @@ def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry
         t_y = member.take(work, "t_y")
         f_y = member.read(work, "f_y", t_y)
         f_u = member.read(work, "f_u", t_y)
-        phi = work.fixed(
-            "phi", factors.MEMBER_IN_TENSION, factors.CLAUSE, note="member in tension"
-        )
+        phi = work.fixed("phi", factors.MEMBER_IN_TENSION, factors.CLAUSE, note="member in tension")
         N_ty = work.step(tension.gross_yielding, A_g, f_y)
         phiN_ty = work.step(tension.design_gross_yielding, phi, N_ty)
         work.check("gross section yield", force, phiN_ty, "7.1, 7.2")

@@ -80,9 +80,7 @@ def _joint_factor(work: Working, end: Inputs) -> Entry:
     return work.fixed("k_r", 0.75, clause, note="longest joints")
 
 
-def _least_clear(
-    work: Working, end: Inputs, distance: str, symbols: tuple[str, str, str]
-) -> Entry:
+def _least_clear(work: Working, end: Inputs, distance: str, symbols: tuple[str, str, str]) -> Entry:
     """Least clear length a_e of a ply: ahead of the end bolt, and between bolts."""
     d_h, d_f = end.kept_line("d_h"), end.take(work, "d_f")
     first, second, least = symbols
@@ -111,7 +109,7 @@ def _bearing_factor(work: Working) -> Entry:
         "C_1",
         bolts.BEARING_FACTOR,
         "9.3.2.4",
-        note="no earthquake action; the edition's values for earthquake or thin plies are not covered",
+        note="no earthquake action; values for earthquake or thin plies are not covered",
         source="9.3.2.4, from memory, fairly sure",
     )
 

@@ -41,9 +41,7 @@ def _run(work: Working, end: Inputs, which: str) -> Entry:
     if known is not None:
         return known
     runs = end.take(work, "l_1"), end.take(work, "l_2")
-    pick, title = (
-        (work.least, "shorter run") if which == "l_min" else (work.greatest, "longer run")
-    )
+    pick, title = (work.least, "shorter run") if which == "l_min" else (work.greatest, "longer run")
     return end.keep(which, pick(which, *runs, title=title))
 
 

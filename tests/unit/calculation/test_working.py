@@ -107,7 +107,12 @@ def test_condition_takes_the_printed_way():
     assert _calculation(t="20 mm").value("N").internal == 0.9 * 2000.0 * 280.0
     thick = _calculation(t="25 mm")
     assert thick.value("N").internal == 0.5 * 2500.0 * 260.0
-    tested = [line for part in thick.record()["parts"] for line in part["lines"] if line["kind"] == "holds"]
+    tested = [
+        line
+        for part in thick.record()["parts"]
+        for line in part["lines"]
+        if line["kind"] == "holds"
+    ]
     assert tested[0]["text"] == "t = 25 mm > 20 mm"
     assert tested[0]["note"] == "reduced"
 
@@ -291,9 +296,7 @@ def test_formula_and_constant_pickle_by_name():
 
 def test_notation_refuses_two_meanings():
     with pytest.raises(InputError, match="one symbol has one meaning"):
-        tl.project_notation(
-            tl.Symbol("a", "a", LENGTH, "one"), tl.Symbol("a2", "a", LENGTH, "two")
-        )
+        tl.project_notation(tl.Symbol("a", "a", LENGTH, "one"), tl.Symbol("a2", "a", LENGTH, "two"))
     with pytest.raises(InputError, match="A Python identifier|a Python identifier"):
         tl.Symbol("N*", "N^{*}", FORCE, "force")
 
