@@ -21,8 +21,17 @@ from typing import Any
 
 from tensionlib.errors import InputError
 
-CALLS = {"minimum": "min", "maximum": "max", "sqrt": "sqrt", "sin": "sin", "cos": "cos", "tan": "tan"}
-_ACCEPTED = "+ - * /, brackets, numbers, and minimum, maximum, sqrt, square, sin, cos, tan, absolute"
+CALLS = {
+    "minimum": "min",
+    "maximum": "max",
+    "sqrt": "sqrt",
+    "sin": "sin",
+    "cos": "cos",
+    "tan": "tan",
+}
+_ACCEPTED = (
+    "+ - * /, brackets, numbers, and minimum, maximum, sqrt, square, sin, cos, tan, absolute"
+)
 _LOCK = threading.RLock()
 
 
@@ -138,7 +147,9 @@ class _Reader:
 
     def _check(self, node: ast.expr) -> None:
         match node:
-            case ast.BinOp(left=left, op=ast.Add() | ast.Sub() | ast.Mult() | ast.Div(), right=right):
+            case ast.BinOp(
+                left=left, op=ast.Add() | ast.Sub() | ast.Mult() | ast.Div(), right=right
+            ):
                 self._check(left)
                 self._check(right)
             case ast.UnaryOp(op=ast.USub(), operand=operand):
@@ -194,7 +205,8 @@ class _Writer:
                 return ["-", *inner] if alone else [r"\left(-", *inner, r"\right)"]
             case ast.BinOp(op=ast.Div(), left=left, right=right):
                 return self._render(
-                    "A / B", {"A": self.pieces(left, alone=True), "B": self.pieces(right, alone=True)}
+                    "A / B",
+                    {"A": self.pieces(left, alone=True), "B": self.pieces(right, alone=True)},
                 )
             case ast.BinOp():
                 return self._flat(node)

@@ -74,6 +74,17 @@ def seat(section: Section, end: End) -> Seat:
             f"to: got {end.to!r}; {section.designation} ({section.shape}) can be {kind} by its"
             f" {', '.join(map(repr, named))}"
         )
+    if section.facing and end.to not in (section.facing, "leg"):
+        raise InputError(
+            f"to: got {end.to!r}; the two parts of {section.designation} face the gusset by their"
+            f" {section.facing}"
+        )
+    gap = section.dims.get("gap")
+    if gap is not None and end.plate.thickness.internal > gap:  # type: ignore[union-attr]
+        raise InputError(
+            f"plate.thickness: {end.plate.thickness} does not go into the gap of"
+            f" {section.designation}"
+        )
     element = {"both flanges": "flange", "slot": "wall", "bar": "plate"}.get(end.to, end.to)
     double = section.shape.startswith("double")
     both = end.to == "both flanges"

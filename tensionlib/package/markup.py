@@ -125,6 +125,7 @@ def _pandoc(question: dict[str, Any]) -> Any:
         ) from missing
     except subprocess.CalledProcessError as failed:
         raise TensionlibError(
-            "pandoc failed: " + failed.stderr.decode(errors="replace").strip()
+            "pandoc failed; 3.9 or later is due, as pypandoc_binary brings it: "
+            + failed.stderr.decode(errors="replace").strip()
         ) from failed
     return json.loads(ran.stdout)

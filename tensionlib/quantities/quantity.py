@@ -75,8 +75,9 @@ class Quantity(Physical):
     comparing unlike dimensions raises UnitError. It cannot be changed once made.
     """
 
-    # `full` is the number as it was reckoned, which arithmetic goes on with; `internal` is the same
-    # to 12 figures, which is printed, compared and calculated with.
+    # `internal` is the number to 12 figures, which is printed, compared and calculated with.
+    # Products go on with `full`, the number as it was reckoned, or 30*deg would be off in the
+    # twelfth figure; sums go on with `internal`, or 1001*mm - 1.001*m would not be 0 mm.
     __slots__ = ("full", "internal", "role", "unit", "view")
 
     full: float
@@ -238,7 +239,7 @@ class Quantity(Physical):
         if not isinstance(other, Real | Physical):
             return NotImplemented
         there = self._same_kind(other)
-        return there is not None and self.internal == snap(there)
+        return there is not None and self.internal == there
 
     def __lt__(self, other: object) -> bool:
         if not isinstance(other, Real | Physical):
@@ -261,17 +262,17 @@ class Quantity(Physical):
         return self.internal >= self._comparable(other)
 
     def _same_kind(self, other: object) -> float | None:
-        """Give the full internal number of a value of the same dimension, or None."""
+        """Give the internal number of a value of the same dimension, or None."""
         if isinstance(other, Quantity):
             if (
                 other.role.exponents == self.role.exponents
                 and other.role.is_plain_number == self.role.is_plain_number
             ):
-                return other.full
+                return other.internal
         elif isinstance(other, Physical):
             exponents = exponents_of(other.dimensions)
             if exponents is not None and exponents == self.role.exponents:
-                return internal_of(other.value, exponents)
+                return snap(internal_of(other.value, exponents))
         elif isinstance(other, Real) and self.role.is_plain_number:
             return float(other)
         return None
@@ -280,7 +281,7 @@ class Quantity(Physical):
         there = self._same_kind(other)
         if there is None:
             raise UnitError(f"cannot compare {self._told()} with {_told(other)}")
-        return snap(there)
+        return there
 
     def _told(self) -> str:
         return f"{self}, {self.role.phrase},"
@@ -296,7 +297,7 @@ class Quantity(Physical):
     def __add__(self, other: object) -> Any:
         if not isinstance(other, Real | Physical):
             return NotImplemented
-        return self._like(self.full + self._addable(other, "add"))
+        return self._like(self.internal + self._addable(other, "add"))
 
     def __radd__(self, other: object) -> Any:
         # sum() begins with a bare 0, which is nothing in any unit.
@@ -309,12 +310,12 @@ class Quantity(Physical):
     def __sub__(self, other: object) -> Any:
         if not isinstance(other, Real | Physical):
             return NotImplemented
-        return self._like(self.full - self._addable(other, "subtract"))
+        return self._like(self.internal - self._addable(other, "subtract"))
 
     def __rsub__(self, other: object) -> Any:
         if not isinstance(other, Real | Physical):
             return NotImplemented
-        return self._like(self._addable(other, "subtract") - self.full)
+        return self._like(self._addable(other, "subtract") - self.internal)
 
     __isub__ = __sub__
 
@@ -375,7 +376,8 @@ class Quantity(Physical):
             if back is None:
                 return made
             return Quantity(internal_of(made.value, back), role_of(back), self.view)
-        return work(self, Quantity(internal_of(other.value, exponents), role_of(exponents)))
+        there = Quantity(internal_of(other.value, exponents), role_of(exponents), self.view)
+        return work(self, there)
 
 
 def _tidy(exponent: float) -> float:

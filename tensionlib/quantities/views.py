@@ -55,7 +55,8 @@ PLAIN = DisplayUnit("", "", 1.0)
 def display_unit(text: str) -> tuple[DisplayUnit, Role]:
     """Read the name of a unit to print in, and the role it measures.
 
-    "10^6 mm4" and "10³ mm³" are units too. Raises InputError with the nearest names for one that is not known.
+    "10^6 mm4" and "10³ mm³" are units too. Raises InputError with the nearest names
+    for one that is not known.
     """
     scaled = _SCALED.fullmatch(text)
     if scaled is None:

@@ -13,10 +13,10 @@ from importlib import import_module
 
 import numpy as np
 import pytest
-from tensionlib.calculation.readback import check_line, evaluate
 
 import tensionlib.standards
 from tensionlib.calculation.formula import Condition, Constant, Formula
+from tensionlib.calculation.readback import check_line, evaluate
 from tensionlib.quantities import METRIC, US, Quantity, Role, latex_value, quantity
 
 

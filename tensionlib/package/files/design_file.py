@@ -128,6 +128,7 @@ class CheckedText:
         self._known = known
         self._found: list[Problem] = []
         self._raw: dict[str, Any] = {}
+        self._marks: dict[str, int] = {}
         self.design: DesignFile | None = None
         self.schedule_problems: tuple[Problem, ...] = ()
         try:
@@ -168,7 +169,7 @@ class CheckedText:
         members = self._members(ends)
         settings, rows = None, ScheduleRows(())
         if isinstance(schedule, schema.ScheduleTable):
-            settings, rows = self._schedule(schedule, ends, members)
+            settings, rows = self._schedule(schedule, ends)
         self.schedule_problems = rows.problems
         if self._found or project is None or standard is None:
             return
@@ -177,7 +178,7 @@ class CheckedText:
             project=_project(project),
             standard=StandardChoice(standard.name, MappingProxyType(dict(standard.options))),
             ends=MappingProxyType({name: end for name, end in ends.items() if end is not None}),
-            members=(*(member for member in members.values() if member is not None), *rows.rows),
+            members=(*members, *rows.rows),
             schedule=settings,
         )
 
@@ -378,16 +379,15 @@ class CheckedText:
 
     # Members
 
-    def _members(self, ends: Mapping[str, EndDetail | None]) -> dict[str, MemberRow | None]:
-        """The members by mark; one that is not sound is None."""
+    def _members(self, ends: Mapping[str, EndDetail | None]) -> list[MemberRow]:
+        """The members that are sound; the marks of all are kept with their lines."""
         from tensionlib.package.files import schema
 
         raw = self._raw.get("members", [])
         if not isinstance(raw, list):
-            self._tell(("members",), raw, "got a table; write each member under [[members]]")
-            return {}
-        members: dict[str, MemberRow | None] = {}
-        lines: dict[str, int] = {}
+            self._tell(("members",), raw, f"got {shown(raw)}; write each member under [[members]]")
+            return []
+        members = []
         for place, table in enumerate(raw):
             path = ("members", place)
             made = self._validated(schema.MemberTable, table, path)
@@ -396,15 +396,16 @@ class CheckedText:
             sound = self._check_names(table, path, ends)
             row = self._member(made, path, ends) if made is not None else None
             mark = str(table.get("mark", "")).strip()
-            if mark in lines:
+            if mark in self._marks:
                 self._tell(
                     (*path, "mark"),
                     mark,
-                    f"{mark!r} is the mark of the member at line {lines[mark]} too",
+                    f"{mark!r} is the mark of the member at line {self._marks[mark]} too",
                 )
             elif mark:
-                lines[mark] = self._lines.line(path)
-                members[mark] = row if sound else None
+                self._marks[mark] = self._lines.line(path)
+            if row is not None and sound:
+                members.append(row)
         return members
 
     def _member(
@@ -448,7 +449,6 @@ class CheckedText:
         self,
         made: schema.ScheduleTable,
         ends: Mapping[str, EndDetail | None],
-        members: Mapping[str, MemberRow | None],
     ) -> tuple[ScheduleSettings | None, ScheduleRows]:
         defaults: dict[str, str | Quantity | None] = {}
         for column, value in _stated(made.defaults):
@@ -484,15 +484,9 @@ class CheckedText:
             settings.ignore,
             made.sheet,
             self._known,
-            {mark: f"{self._path.name} line {self._line_of(mark)}" for mark in members},
+            {mark: f"{self._path.name} line {line}" for mark, line in self._marks.items()},
         )
         return settings, rows_of(self._path.parent / made.file, made.file, setup)
-
-    def _line_of(self, mark: str) -> int:
-        for place, table in enumerate(self._raw["members"]):
-            if isinstance(table, dict) and str(table.get("mark", "")).strip() == mark:
-                return self._lines.line(("members", place))
-        return 1
 
 
 def _stated(made: BaseModel, but: tuple[str, ...] = ()) -> tuple[tuple[str, Any], ...]:

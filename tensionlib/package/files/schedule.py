@@ -109,8 +109,7 @@ def read_schedule(
     """
     path = Path(path)
     known = known or KnownNames.of_library()
-    defaults = {} if defaults is None else defaults
-    _check_arguments(defaults, columns or {}, ends, known)
+    defaults = _checked_arguments(defaults or {}, columns or {}, ends, known)
     read = rows_of(
         path,
         path.name,
@@ -197,12 +196,13 @@ class _Headers:
 
     def column(self, header: str) -> tuple[str, str] | None:
         """The column and the unit that a header states."""
+        name, unit = split_unit(header)
         column = self._names.get(_folded(header))
         if column is not None:
-            return column, ""
-        name, unit = split_unit(header)
+            # A mapped header may hold brackets that are no unit: "force (ULS)".
+            return column, unit if column in QUANTITIES and _is_unit_of(column, unit) else ""
         column = self._names.get(_folded(name))
-        return (column, unit) if column in ("length", "force") else None
+        return (column, unit) if column in QUANTITIES else None
 
 
 def split_unit(header: str) -> tuple[str, str]:
@@ -474,7 +474,8 @@ class _Reader:
         if elsewhere:
             raise InputError(f"{mark!r} is the mark of the member at {elsewhere} too")
         if len(rows) > 1:
-            raise InputError(f"{mark!r} is the mark of rows {', '.join(map(str, rows))}")
+            more = f" and {len(rows) - 5} more" if len(rows) > 5 else ""
+            raise InputError(f"{mark!r} is the mark of rows {', '.join(map(str, rows[:5]))}{more}")
 
 
 def _end_named(name: str, ends: Mapping[str, EndDetail | None]) -> EndDetail | None:
@@ -521,16 +522,16 @@ def _due() -> str:
     return ", ".join(_header(column) for column in (*REQUIRED, "end"))
 
 
-def _check_arguments(
+def _checked_arguments(
     defaults: Mapping[str, str | Quantity],
     columns: Mapping[str, str],
     ends: Mapping[str, EndDetail],
     known: KnownNames,
-) -> None:
-    """Refuse defaults and columns that are wrong whatever the file holds."""
+) -> dict[str, str | Quantity]:
+    """The defaults; refuses defaults and columns that are wrong whatever the file holds."""
     for argument, given, accepted in (
         ("defaults", defaults, DEFAULTS),
-        ("columns", columns, COLUMNS),
+        ("columns", columns, tuple(COLUMNS)),
     ):
         for column in given:
             if column not in accepted:
@@ -538,10 +539,11 @@ def _check_arguments(
                     f"{argument}: {column!r} is none of {', '.join(accepted)}."
                     + did_you_mean(column, accepted)
                 )
+    checked: dict[str, str | Quantity] = {}
     for column, value in defaults.items():
         try:
             if column == "length":
-                take_length(column, value)
+                value = take_length(column, value)
             elif not isinstance(value, str):
                 raise InputError(f"got {value!r}; text is due")
             elif column in ENDS:
@@ -550,3 +552,5 @@ def _check_arguments(
                 known.check(column, value)
         except TensionlibError as error:
             raise type(error)(f"defaults: {column}: {reason_of(error, column)}") from None
+        checked[column] = value
+    return checked

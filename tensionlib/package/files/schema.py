@@ -1,6 +1,8 @@
 """The tables of a design file as pydantic models, and the JSON Schema that is made of them.
 
 Only functions that read or describe a design file import this module, since it loads pydantic.
+Run as ``python -m tensionlib.package.files.schema docs/design-file.schema.json`` it writes the
+schema anew.
 """
 
 from __future__ import annotations
@@ -235,6 +237,7 @@ class WeldedTable(Table):
     transverse: Annotated[Quantity | None, above_zero("90 mm")] = None
     quality: Annotated[str, one_of(*QUALITIES)] = "SP"
     metal: Name = "E48XX"
+    slot_clearance: Annotated[Quantity | None, zero_or_more("3 mm")] = None
     k_te: Annotated[
         float | None,
         Taken(

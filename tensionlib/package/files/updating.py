@@ -120,20 +120,25 @@ class _Whole(dict[str, Any]):
     """A table that takes the place of another one, where a plain dict changes some of its keys."""
 
 
+def _whole(value: Any) -> Any:
+    if isinstance(value, dict):
+        return _Whole({key: _whole(one) for key, one in value.items()})
+    return value
+
+
 def _plain(value: Any, place: str) -> Any:
     """Changes as TOML can hold them: dicts, lists and plain values, quantities as text."""
     if isinstance(value, Quantity):
         return written(value)
     if isinstance(value, EndDetail):
-        return _Whole(value.table())
+        return _whole(value.table())
     if isinstance(value, Mapping):
         for key in value:
             if not isinstance(key, str):
                 raise InputError(f"{place}: the key {key!r} is not text")
         return {key: _plain(one, f"{place}[{key!r}]") for key, one in value.items()}
     if isinstance(value, list | tuple):
-        listed = [_plain(one, place) for one in value]
-        return [_Whole(one) if isinstance(one, dict) else one for one in listed]
+        return [_whole(_plain(one, place)) for one in value]
     if value is None or isinstance(value, str | int | float | datetime.date):
         return value
     raise InputError(
@@ -217,7 +222,7 @@ def _tables(value: list[Any]) -> bool:
 def _same(old: Any, new: Any) -> bool:
     """Whether values are equal and of one kind: 1, 1.0 and true are three things in TOML."""
     kinds = [(isinstance(one, bool), isinstance(one, float)) for one in (old, new)]
-    return bool(kinds[0] == kinds[1] and old == new)
+    return bool(old == new)
 
 
 def _without_none(value: Any) -> Any:

@@ -19,7 +19,11 @@ local SCHEMES = { http = true, https = true, mailto = true }
 local function warnings(log)
   local lines = pandoc.List {}
   for _, message in ipairs(log) do
-    if message.verbosity == "WARNING" then lines:insert((message.pretty:gsub("\n.*", ""))) end
+    -- A message shows its fields only as JSON.
+    local fields = pandoc.json.decode(pandoc.json.encode(message), false)
+    if fields.verbosity == "WARNING" then
+      lines:insert((fields.pretty:gsub("%s+", " "):gsub(", rendering as TeX.*", "")))
+    end
   end
   return lines
 end

@@ -29,6 +29,7 @@ from tensionlib.package.files import (
     FileWriteError,
     KnownNames,
     MemberRow,
+    Problem,
     atomic,
     project_record,
     read_design_file,
@@ -483,7 +484,7 @@ BAD: list[tuple[str, str, list[tuple[str, str]]]] = [
     (
         "# Walkway",
         'ends = "A"\n# Walkway',
-        [("ends", "is not valid TOML at column 7: Cannot overwrite a value; found '.A]'")],
+        [("[ends.A]", "is not valid TOML at column 8: Cannot overwrite a value; found ']'")],
     ),
     # standard
     (
@@ -623,7 +624,7 @@ BAD: list[tuple[str, str, list[tuple[str, str]]]] = [
             (
                 "threads",
                 "ends.A.threads: got 'in plane'; one of 'in shear plane', 'out of shear plane' is"
-                " due. Did you mean 'in shear plane' or 'out of shear plane'?",
+                " due. Did you mean 'in shear plane'?",
             )
         ],
     ),
@@ -710,7 +711,7 @@ BAD: list[tuple[str, str, list[tuple[str, str]]]] = [
     (
         'mark = "RB2"',
         'mark = "RB1 "',
-        [('"RB1 "', "members[2].mark: 'RB1' is the mark of the member at line 48 too")],
+        [('"RB1 "', "members[2].mark: 'RB1' is the mark of the member at line 50 too")],
     ),
     ('mark = "RB2"', 'mark = ""', [('mark = ""', f"members[2].mark: {_NO_NAME}")]),
     (
@@ -866,6 +867,32 @@ def test_all_problems_are_listed_in_the_order_of_the_file(folder: Path) -> None:
     assert isinstance(caught.value, InputError)
 
 
+@pytest.mark.parametrize(
+    ("table", "message"),
+    [
+        ("project = 3", "project: got 3; a table is due"),
+        ("standard = []", "standard: got a list; a table is due"),
+        (
+            "standard = { name = 'NZS 3404', options = 3 }",
+            "standard.options: got 3; a table is due",
+        ),
+        ("ends = [1]", "ends: got a list; write each end as a table [ends.NAME]"),
+        ("members = [1]", "members[1]: got 1; a table is due"),
+        ("members = {}", "members: got a table; write each member under [[members]]"),
+        ("members = 3", "members: got 3; write each member under [[members]]"),
+        ("schedule = 'members.csv'", "schedule: got 'members.csv'; a table is due"),
+    ],
+)
+def test_a_table_that_is_none_is_told(folder: Path, table: str, message: str) -> None:
+    whole = {
+        "project": 'project = { job_number = "1", title = "x" }',
+        "standard": 'standard.name = "NZS 3404"',
+    }
+    whole[table.split()[0]] = table
+    told = _problems(folder, "\n".join(whole.values()))
+    assert told == [f"canopy.toml, line {[*whole].index(table.split()[0]) + 1}, {message}"]
+
+
 def test_a_member_of_a_bad_end_is_not_blamed(folder: Path) -> None:
     told = _problems(folder, (DESIGN + SCHEDULE).replace("70 mm", "70", 1))
     assert len(told) == 1
@@ -888,13 +915,13 @@ SCHEDULE_BAD = [
     (
         'force = "N star"',
         'froce = "N star"',
-        ["canopy.toml, line 68, schedule.columns.froce: unknown key. Did you mean 'force'?"],
+        ["canopy.toml, line 73, schedule.columns.froce: unknown key. Did you mean 'force'?"],
     ),
     (
         'end = "A"',
         'end = "C"',
         [
-            "canopy.toml, line 72, schedule.defaults.end: no end is named 'C'; ends are 'A',"
+            "canopy.toml, line 77, schedule.defaults.end: no end is named 'C'; ends are 'A',"
             " 'welded 6'."
         ],
     ),
@@ -902,7 +929,7 @@ SCHEDULE_BAD = [
         'steel = "AS/NZS 3679.1 300"',
         'steel = "AS/NZS 3679.1 301"',
         [
-            "canopy.toml, line 71, schedule.defaults.steel: 'AS/NZS 3679.1 301' is not known. Did"
+            "canopy.toml, line 76, schedule.defaults.steel: 'AS/NZS 3679.1 301' is not known. Did"
             " you mean 'AS/NZS 3679.1 300' or 'AS/NZS 3678 250'?"
         ],
     ),
@@ -915,14 +942,14 @@ SCHEDULE_BAD = [
         'end = "A"',
         'end = "A"\nforce = "5 kN"',
         [
-            "canopy.toml, line 73, schedule.defaults.force: unknown key. Keys here are title,"
+            "canopy.toml, line 78, schedule.defaults.force: unknown key. Keys here are title,"
             " section, steel, length, end, end_1, end_2, standard."
         ],
     ),
     (
         'ignore = ["checked?"]',
         'ignore = "checked?"',
-        ["canopy.toml, line 65, schedule.ignore: got 'checked?'; a list is due"],
+        ["canopy.toml, line 70, schedule.ignore: got 'checked?'; a list is due"],
     ),
 ]
 
@@ -935,7 +962,7 @@ def test_a_problem_of_the_schedules_settings(
     told = _problems(folder, text)
     if messages is None:
         [one] = told
-        assert one.startswith("canopy.toml, line 73, schedule.defaults.length: got '5', a number")
+        assert one.startswith("canopy.toml, line 78, schedule.defaults.length: got '5', a number")
     else:
         assert told == messages
 
@@ -955,7 +982,7 @@ def test_a_schedule_outside_the_folder_is_refused(folder: Path, file: str) -> No
     (folder / "in").mkdir()
     text = DESIGN + SCHEDULE.replace('"members.csv"', f"'{file}'")
     assert _problems(folder / "in", text) == [
-        f"canopy.toml, line 64, schedule.file: got {file!r}; a file in the folder of canopy.toml or"
+        f"canopy.toml, line 69, schedule.file: got {file!r}; a file in the folder of canopy.toml or"
         ' below it is due, written with "/", for example "members.csv"'
     ]
 
@@ -1011,6 +1038,7 @@ def test_a_missing_file_is_told_with_the_nearest_name(folder: Path) -> None:
     assert str(caught.value) == "canpy.toml: there is no such file. Did you mean 'canopy.toml'?"
 
 
+@pytest.mark.skipif(not hasattr(os, "mkfifo"), reason="the system has no named pipes")
 def test_what_is_no_ordinary_file_is_refused(folder: Path) -> None:
     os.mkfifo(folder / "pipe.toml")
     with pytest.raises(DesignFileError, match=r"^pipe\.toml: is not an ordinary file$"):
@@ -1025,11 +1053,14 @@ def test_no_text_breaks_the_reader(tmp_path_factory: pytest.TempPathFactory, dat
     end = data.draw(st.integers(start, min(len(DESIGN), start + 80)))
     piece = data.draw(st.sampled_from(["", DESIGN[start:end] * 2, "[[", '"', "= 3\n", "\n[a]\n"]))
     text = DESIGN[:start] + piece + DESIGN[end:]
+    problems: list[Problem] | None = None
     try:
         _read(tmp_path_factory.mktemp("any"), text)
     except DesignFileError as error:
-        assert error.problems
-        assert all(p.line is None or 1 <= p.line <= text.count("\n") + 1 for p in error.problems)
+        problems = error.problems
+    assert problems != []
+    for problem in problems or ():
+        assert problem.line is None or 1 <= problem.line <= text.count("\n") + 1
 
 
 # Lines
@@ -1262,18 +1293,18 @@ def test_a_revision_is_added_and_the_old_ones_stay(folder: Path) -> None:
     assert _changed_lines(folder) == [
         '- revision = "B"\n',
         '+ revision = "C"\n',
+        "+ \n",
         "+ [[project.revisions]]\n",
         '+ revision = "C"\n',
         '+ date = "2025-04-02"\n',
         '+ description = "Braces lengthened"\n',
-        "+ \n",
     ]
 
 
 REFUSED = [
     (
         {"ends": {"A": {"pitch": 80}}},
-        "canopy.toml, line 33, ends.A.pitch: got 80, a bare number; give a length with its unit,"
+        "canopy.toml, line 34, ends.A.pitch: got 80, a bare number; give a length with its unit,"
         " for example '70 mm'",
     ),
     (
@@ -1282,11 +1313,11 @@ REFUSED = [
     ),
     (
         {"ends": {"welded 6": None}},
-        "canopy.toml, line 53, members[2].far_end: no end is named 'welded 6'; ends are 'A'.",
+        "canopy.toml, line 55, members[2].far_end: no end is named 'welded 6'; ends are 'A'.",
     ),
     (
         {"members": {"RB1": {"force": "-1 kN"}}},
-        "canopy.toml, line 54, members[1].force: got -1 kN, a compression force; this tool designs"
+        "canopy.toml, line 56, members[1].force: got -1 kN, a compression force; this tool designs"
         " tension, and compression enters only as the reversal case of a gusset. Give the tension"
         " force, for example '285 kN'",
     ),
@@ -1340,7 +1371,6 @@ def test_a_change_that_breaks_the_schedule_is_refused(folder: Path) -> None:
         _change(folder, {"ends": {"welded 6": None}})
     assert [str(problem) for problem in caught.value.problems] == [
         "members.csv, row 2, end: no end is named 'welded 6'; ends are 'A'."
-        " Did you mean 'A'?".replace(" Did you mean 'A'?", "")
     ]
     assert (folder / "canopy.toml").read_text() == text
 

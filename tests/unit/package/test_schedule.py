@@ -218,6 +218,30 @@ def test_mapped_ignored_and_defaulted_columns(tmp_path: Path) -> None:
     assert read.rows[0].end_1.name == read.rows[0].end_2.name == "bolted 3M20"
 
 
+@pytest.mark.parametrize("header", ["N* (ULS) [kN]", "Force (ULS)", "n* (uls)"])
+def test_a_mapped_header_may_hold_brackets(tmp_path: Path, header: str) -> None:
+    force = "285" if header.endswith("[kN]") else "285 kN"
+    mapped = "N* (ULS)" if header.startswith("n") else header
+    read = _read(
+        tmp_path,
+        _csv(_head(force=header), _row(force=force)),
+        strict=True,
+        columns={"force": mapped},
+    )
+    assert read.rows[0].force.internal == 285_000.0
+
+
+def test_a_default_length_has_its_own_unit(tmp_path: Path) -> None:
+    read = _read(tmp_path, _csv(HEAD, _row(length="")), strict=True, defaults={"length": "15 ft"})
+    assert read.rows[0].length.internal == 4572.0
+
+
+def test_a_mark_of_very_many_rows_is_told_shortly(tmp_path: Path) -> None:
+    read = _read(tmp_path, _csv(HEAD, *[GOOD] * 2000))
+    assert read.problems[0].reason == "'RB1' is the mark of rows 2, 3, 4, 5, 6 and 1995 more"
+    assert len(read.problems) == 2000
+
+
 def test_a_default_fills_empty_cells_only(tmp_path: Path) -> None:
     text = _csv(HEAD, _row(section=""), _row(mark="RB2"))
     read = _read(tmp_path, text, strict=True, defaults={"section": EA})

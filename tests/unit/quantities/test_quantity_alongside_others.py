@@ -106,7 +106,8 @@ def test_a_handcalcs_block_with_both_kinds_of_value() -> None:
         r"= \left(-153.23\ \text{MPa}\right)",
         rf"N_{{t}} = \phi \cdot A_{{g}} \cdot f_{{y}} = 0.900 \cdot {area} \cdot 300\ \text{{MPa}} "
         r"= 502.2\ \text{kN}",
-        rf"A_{{2}} = A_{{g}} + w \cdot w = {area} + {metre} \cdot {metre} = 11860\ \text{{mm}}^{{2}}",
+        rf"A_{{2}} = A_{{g}} + w \cdot w = {area} + {metre} \cdot {metre} "
+        r"= 11860\ \text{mm}^{2}",
         rf"u = \frac{{ N }}{{ N_{{t}} }} = \frac{{ {minus} }}{{ 502.2\ \text{{kN}} }} = -0.568",
         rf"b = w + \frac{{ A_{{g}} }}{{ w }} = {metre} + \frac{{ {area} }}{{ {metre} }} "
         r"= 118.6\ \text{mm}",

@@ -1,5 +1,6 @@
 """Reading quantities from text, and lists of quantities."""
 
+import contextlib
 import math
 from fractions import Fraction
 
@@ -173,12 +174,8 @@ def test_refuses_what_is_no_text() -> None:
 
 @given(st.text(alphabet="0123456789. -+/eExk×·*^²⁶NmMPainft\"'°,()", max_size=20))
 def test_any_text_is_read_or_refused_in_our_own_words(text: str) -> None:
-    try:
-        read = parse(text)
-    except TensionlibError as error:
-        assert str(error)
-    else:
-        assert math.isfinite(read.internal)
+    with contextlib.suppress(TensionlibError):
+        assert math.isfinite(parse(text).internal)
 
 
 @pytest.mark.parametrize("view", [METRIC, US])
