@@ -7,9 +7,11 @@ line's own rounding band. A picture that lost a bracket is found here, not on si
 from __future__ import annotations
 
 import math
+import operator
 import re
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, field
+from typing import NoReturn
 
 from tensionlib.errors import TensionlibError
 from tensionlib.quantities import LINE_FIGURES
@@ -36,7 +38,7 @@ class _Number:
 Node = Callable[[list[float]], float]
 
 _TOKEN = re.compile(
-    r"\s*(?:(?P<number>\d+(?:\.\d+)?)|(?P<name>\\[A-Za-z]+|\\\ |\\.)|(?P<other>[-+^_{}(),/|]|[A-Za-zµ]+))"
+    r"\s*(?:(?P<number>\d+(?:\.\d+)?)|(?P<name>\\[A-Za-z]+|\\.)|(?P<other>[-+^_{}(),/|]))"
 )
 _SKIPPED = (r"\ ", r"\,")
 _CALLS: dict[str, Callable[..., float]] = {
@@ -46,6 +48,10 @@ _CALLS: dict[str, Callable[..., float]] = {
     r"\cos": math.cos,
     r"\tan": math.tan,
 }
+
+
+def _joined(operation: Callable[[float, float], float], left: Node, right: Node) -> Node:
+    return lambda v: operation(left(v), right(v))
 
 
 @dataclass
@@ -72,19 +78,14 @@ class _Parser:
         node = self._product()
         while (sign := self._peek()) in ("+", "-"):
             self._next()
-            left, right = node, self._product()
-            if sign == "+":
-                node = lambda v, a=left, b=right: a(v) + b(v)  # noqa: E731
-            else:
-                node = lambda v, a=left, b=right: a(v) - b(v)  # noqa: E731
+            node = _joined(operator.add if sign == "+" else operator.sub, node, self._product())
         return node
 
     def _product(self) -> Node:
         node = self._power()
         while self._peek() == r"\cdot":
             self._next()
-            left, right = node, self._power()
-            node = lambda v, a=left, b=right: a(v) * b(v)  # noqa: E731
+            node = _joined(operator.mul, node, self._power())
         return node
 
     def _power(self) -> Node:
@@ -121,7 +122,7 @@ class _Parser:
             return self._call(_CALLS[token])
         if token[:1].isdigit():
             return self._number(token)
-        return self._fail(f"{token!r} is not expected")
+        self._fail(f"{token!r} is not expected")
 
     def _bracket(self) -> Node:
         opened = self._next()
@@ -200,7 +201,7 @@ class _Parser:
         if got != token:
             self._fail(f"{got!r} where {token!r} is due")
 
-    def _fail(self, why: str) -> Node:
+    def _fail(self, why: str) -> NoReturn:
         raise ReadbackError(f"cannot read back {self.text!r} at character {self.at}: {why}")
 
 

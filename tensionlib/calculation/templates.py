@@ -17,7 +17,7 @@ import warnings
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 from functools import cache
-from typing import Any
+from typing import Any, NoReturn
 
 from tensionlib.errors import InputError
 
@@ -134,16 +134,18 @@ class _Reader:
         self.tree = ast.parse(textwrap.dedent("".join(lines))).body[0]
 
     def expression(self) -> ast.expr:
-        if not isinstance(self.tree, ast.FunctionDef):
-            self._refuse(self.tree, "it is not a def with one return")
-        body = list(self.tree.body)
+        tree = self.tree
+        if not isinstance(tree, ast.FunctionDef):
+            self._refuse(tree, "it is not a def with one return")
+        body = list(tree.body)
         if body and isinstance(body[0], ast.Expr) and isinstance(body[0].value, ast.Constant):
             body = body[1:]
         if len(body) != 1 or not isinstance(body[0], ast.Return) or body[0].value is None:
-            self._refuse(self.tree, "its body must be one return expression")
-        self.parameters = {arg.arg for arg in self.tree.args.args}
-        self._check(body[0].value)
-        return body[0].value
+            self._refuse(tree, "its body must be one return expression")
+        self.parameters = {arg.arg for arg in tree.args.args}
+        expression = body[0].value
+        self._check(expression)
+        return expression
 
     def _check(self, node: ast.expr) -> None:
         match node:
@@ -180,7 +182,7 @@ class _Reader:
                 " Constant with its unit",
             )
 
-    def _refuse(self, node: ast.AST, why: str) -> Any:
+    def _refuse(self, node: ast.AST, why: str) -> NoReturn:
         line = self.first + getattr(node, "lineno", 1) - 1
         raise InputError(f"formula {self.name}, line {line}: {why}; accepted are {_ACCEPTED}")
 
@@ -199,7 +201,7 @@ class _Writer:
             case ast.Name(id=name):
                 return [Slot(name, bracketed=alone)]
             case ast.Constant(value=value):
-                return [_number(value)]
+                return [repr(value)]
             case ast.UnaryOp(operand=operand):
                 inner = self._factor(operand)
                 return ["-", *inner] if alone else [r"\left(-", *inner, r"\right)"]
@@ -336,10 +338,6 @@ def _tidy(latex: str) -> str:
         text = text.replace(before, after)
     text = text.replace(r"\left( ", r"\left(").replace(r" \right)", r"\right)")
     return lead + text + tail if text else ""
-
-
-def _number(value: float) -> str:
-    return repr(value)
 
 
 def _joined(pieces: list[str | Slot]) -> Pieces:

@@ -114,11 +114,7 @@ class Working:
             As `quantities.door`; also for a key that stands twice.
         """
         symbol = self._symbol(symbol)
-        role = symbol.role
-        if not (role.force or role.length or role.mass) and isinstance(value, int | float):
-            number = float(value)
-        else:
-            number = door(symbol.text, value, role).internal
+        number = float(door(symbol.text, value, symbol.role).internal)
         return self.given_number(symbol, number, origin, key or symbol.name)
 
     def given_number(self, symbol: str | Symbol, number: Any, origin: str, key: str) -> Entry:

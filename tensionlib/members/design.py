@@ -66,7 +66,7 @@ def design(
         raise InputError(f"member: got {member!r}; a Member(...) is due")
     chosen = find_standard(standard)
     work, N_star = _force(force, chosen.notation, origin)
-    _check_fit(member, chosen)
+    holes = _fitting_holes(member, chosen)
     two = len(member.ends) == 2
     ends = tuple(
         end_inputs(
@@ -94,7 +94,9 @@ def design(
         heading,
         sources=((chosen.source, "member and connection design"), *_materials(member)),
         draw=lambda: sketches(
-            member, f"{N_star.symbol.text} = {format_value(demand, FORCE, view, SUMMARY_FIGURES)}"
+            member,
+            f"{N_star.symbol.text} = {format_value(demand, FORCE, view, SUMMARY_FIGURES)}",
+            holes,
         ),
         view=view,
     )
@@ -127,17 +129,21 @@ def _refuse_compression(force: float) -> None:
         )
 
 
-def _check_fit(member: Member, chosen: Standard) -> None:
+def _fitting_holes(member: Member, chosen: Standard) -> tuple[float, ...]:
+    """Hole diameter of each end in mm, 0 for a welded one; refuses holes that do not fit."""
+    holes = []
     for end in member.ends:
+        hole = 0.0
         if isinstance(end, Bolted):
-            place = seat(member.profile, end)
             d_f = bolt(end.bolts).d_f
-            clearance = (
+            hole = d_f + (
                 chosen.hole_clearance(d_f)
                 if end.clearance is None
                 else door("clearance", end.clearance, LENGTH).internal
             )
-            check_fit(member.profile, end, place, d_f + clearance)
+            check_fit(member.profile, end, seat(member.profile, end), hole)
+        holes.append(hole)
+    return tuple(holes)
 
 
 def _materials(member: Member) -> list[tuple[Source, str]]:

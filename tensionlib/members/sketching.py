@@ -1,11 +1,128 @@
-"""Sketches of a member's ends."""
+"""From a member's ends to their sketches."""
 
 from __future__ import annotations
 
+from typing import Any
+
 from tensionlib.calculation.result import Sketch
+from tensionlib.joints.ends import Bolted, End, Welded
+from tensionlib.joints.sketch import EndView, describe, sketch_end
+from tensionlib.joints.svg import to_svg
+from tensionlib.members.geometry import Seat, seat
 from tensionlib.members.member import Member
+from tensionlib.steel import Section, bolt
+
+_SPREAD = 2 * 0.5773502691896257  # both sides of the force at 30°: twice the tangent
 
 
-def sketches(member: Member, force: str) -> tuple[Sketch, ...]:
-    """One sketch for each distinct end; `force` is the label of the force arrow."""
-    return ()
+def sketches(member: Member, force: str, holes: tuple[float, ...]) -> tuple[Sketch, ...]:
+    """One sketch for each distinct end.
+
+    `force` labels the force arrow; `holes` are the hole diameters of the ends in mm, 0 for a
+    welded one.
+    """
+    ends = member.ends
+    found = []
+    for i, (end, hole) in enumerate(zip(ends, holes, strict=True), start=1):
+        view = end_view(member.profile, end, force, hole)
+        title = "End connection, both ends" if len(ends) == 1 else f"End {i}"
+        found.append(Sketch(title, to_svg(sketch_end(view)), describe(view)))
+    return tuple(found)
+
+
+def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
+    """What the sketch of an end shows; `hole` is the hole diameter, 0 for a welded end."""
+    place = seat(section, end)
+    if isinstance(end, Bolted):
+        return _bolted(section, end, place, force, hole)
+    return _welded(section, end, place, force)
+
+
+def _mm(length: Any) -> float:
+    return 0.0 if length is None else float(length.internal)
+
+
+def _plate_width(end: End, lines_apart: float, joint: float, width: float) -> float:
+    """The gusset's stated width, or one that looks the part: wider than what it takes hold of."""
+    if end.plate.width is not None:
+        return _mm(end.plate.width)
+    return max(1.15 * width, lines_apart + _SPREAD * joint)
+
+
+def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float) -> EndView:
+    fastener = bolt(end.bolts)
+    pitch, first = _mm(end.pitch), _mm(end.end_distance)
+    apart = _mm(end.line_spacing) if end.lines == 2 else 0.0
+    stagger = _mm(end.stagger)
+    if place.lines_from == "heel":
+        lines = [_mm(end.gauge), _mm(end.gauge) + apart]
+    else:
+        lines = [(place.width - apart) / 2, (place.width + apart) / 2]
+    lines = lines[: end.lines]
+    holes = tuple(
+        (first + i * pitch + (stagger if j else 0.0), y)
+        for j, y in enumerate(lines)
+        for i in range(end.per_line)
+    )
+    xs = sorted({x for x, _ in holes})
+    last = xs[-1]
+    edge = last + _mm(
+        end.plate_end_distance if end.plate_end_distance is not None else end.end_distance
+    )
+    net = tuple((max(x for x, y in holes if y == line), line) for line in lines)
+    bottom, top = (net[0][0], 0.0), (net[-1][0], place.width)
+    count = f"{len(holes) * place.gussets} {end.bolts}"
+    return EndView(
+        section=section,
+        to=end.to,
+        element=place.element,
+        width=place.width,
+        thickness=place.thickness,
+        plate_thickness=_mm(end.plate.thickness),
+        plate_end=edge,
+        plate_width=_plate_width(end, apart, last - first, place.width),
+        force=force,
+        notes=(
+            section.designation.partition(",")[0],
+            f"gusset {_mm(end.plate.thickness):g} mm",
+            count,
+            f"holes {hole:g} mm",
+        ),
+        holes=holes,
+        hole=hole,
+        bolt=fastener.d_f,
+        net=(bottom, *net, top),
+        along=((0.0, *xs, edge),),
+        across=tuple(dict.fromkeys((0.0, *lines, place.width))),
+    )
+
+
+def _welded(section: Section, end: Welded, place: Seat, force: str) -> EndView:
+    l_1, l_2, b = _mm(end.length_1), _mm(end.length_2), place.width
+    welds = [(0.0, 0.0, l_1, 0.0), (0.0, b, l_2, b)]
+    if end.transverse is not None:
+        welds.append((0.0, 0.0, 0.0, min(_mm(end.transverse), b)))
+    runs = ("on both faces",) if end.to in ("slot", "bar") else ()
+    along = ((0.0, l_1),) if l_1 == l_2 else ((0.0, l_1), (0.0, l_2))
+    return EndView(
+        section=section,
+        to=end.to,
+        element=place.element,
+        width=b,
+        thickness=place.thickness,
+        plate_thickness=_mm(end.plate.thickness),
+        plate_end=max(l_1, l_2) + 10.0,
+        plate_width=_plate_width(end, b, min(l_1, l_2), b),
+        force=force,
+        notes=(
+            section.designation.partition(",")[0],
+            f"gusset {_mm(end.plate.thickness):g} mm",
+            f"{_mm(end.leg_size):g} mm fillets",
+            *runs,
+            f"{end.quality}, {end.metal}",
+        ),
+        welds=tuple(welds),
+        leg_size=_mm(end.leg_size),
+        along=along,
+        across=(0.0, b),
+    )

@@ -8,7 +8,7 @@ x. Tubes and bars are centred at the origin.
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Callable, Mapping
 
 from tensionlib.errors import InputError
 from tensionlib.steel.outline import Circle, Corner, Outline
@@ -54,7 +54,8 @@ def check(shape: str, dims: Dims) -> None:
             )
 
 
-_LIMITS = {
+# For each shape: a dimension, what it must stay below, and what that is in words.
+_LIMITS: dict[str, tuple[tuple[str, Callable[[Dims], float], str], ...]] = {
     "angle": (
         ("b2", lambda d: d["b1"] + 1e-9, "the long leg b1"),
         ("t", lambda d: d["b2"], "the short leg"),

@@ -283,22 +283,19 @@ class CheckedText:
 
     def _check_names(
         self, table: Mapping[str, Any], path: KeyPath, ends: Mapping[str, Any] | None = None
-    ) -> bool:
-        """Whether all that a table names is known, be the table sound otherwise or not."""
-        sound = True
+    ) -> None:
+        """Check all that a table names, be the table sound otherwise or not."""
         for key, value in table.items():
             here = (*path, key)
             if isinstance(value, dict):
-                sound = self._check_names(value, here) and sound
+                self._check_names(value, here)
             elif not isinstance(value, str) or not value.strip():
                 continue
             elif ends is not None and key in ("end", "start_end", "far_end"):
                 if value not in ends:
                     self._tell(here, value, no_end(value, ends))
-                    sound = False
             else:
-                sound = self._check_name(here, value, key) and sound
-        return sound
+                self._check_name(here, value, key)
 
     def _check_issued(self, project: schema.ProjectTable) -> None:
         if project.status != "issued":
@@ -348,9 +345,8 @@ class CheckedText:
             except TensionlibError as error:
                 self._tell(path, name, f"the name of an end: {error}")
             if isinstance(table, dict):
-                sound = self._check_names(table, path)
-                end = self._end(self._validated(schema.EndTable, table, path), name, path)
-                ends[name] = end if sound else None
+                self._check_names(table, path)
+                ends[name] = self._end(self._validated(schema.EndTable, table, path), name, path)
             else:
                 self._tell(path, table, f"got {shown(table)}; a table [ends.{name}] is due")
                 ends[name] = None
@@ -393,7 +389,7 @@ class CheckedText:
             made = self._validated(schema.MemberTable, table, path)
             if not isinstance(table, dict):
                 continue
-            sound = self._check_names(table, path, ends)
+            self._check_names(table, path, ends)
             row = self._member(made, path, ends) if made is not None else None
             mark = str(table.get("mark", "")).strip()
             if mark in self._marks:
@@ -404,7 +400,7 @@ class CheckedText:
                 )
             elif mark:
                 self._marks[mark] = self._lines.line(path)
-            if row is not None and sound:
+            if row is not None:
                 members.append(row)
         return members
 

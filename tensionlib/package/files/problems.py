@@ -9,6 +9,7 @@ from typing import Any, Literal
 from tensionlib.errors import InputError
 
 _LONGEST = 60
+_LONGEST_REASON = 1000
 
 
 @dataclass(frozen=True)
@@ -110,4 +111,4 @@ def reason_of(error: Exception, *fields: str) -> str:
     message = str(error)
     for field in fields:
         message = message.removeprefix(f"{field}: ")
-    return message
+    return message if len(message) <= _LONGEST_REASON else message[: _LONGEST_REASON - 1] + "…"

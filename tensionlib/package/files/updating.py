@@ -222,7 +222,7 @@ def _tables(value: list[Any]) -> bool:
 def _same(old: Any, new: Any) -> bool:
     """Whether values are equal and of one kind: 1, 1.0 and true are three things in TOML."""
     kinds = [(isinstance(one, bool), isinstance(one, float)) for one in (old, new)]
-    return bool(old == new)
+    return bool(kinds[0] == kinds[1] and old == new)
 
 
 def _without_none(value: Any) -> Any:

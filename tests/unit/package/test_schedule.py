@@ -28,7 +28,7 @@ from tensionlib.package.files import (
     read_schedule,
     reading,
 )
-from tensionlib.package.files.schedule import split_unit
+from tensionlib.package.files.schedule import Setup, rows_of, split_unit
 from tensionlib.quantities import LENGTH, door
 
 
@@ -542,6 +542,14 @@ def test_a_harmless_unknown_column_leaves_the_rows_good(tmp_path: Path) -> None:
     assert (len(read.rows), len(read.problems)) == (1, 1)
 
 
+def test_an_end_that_is_bad_elsewhere_makes_no_row_and_no_problem(tmp_path: Path) -> None:
+    path = tmp_path / "members.csv"
+    path.write_text(_csv(HEAD, GOOD, _row(mark="RB2", end="B")))
+    setup = Setup({"A": None, "B": ENDS["A"]}, {}, {}, (), "", KNOWN)
+    read = rows_of(path, "members.csv", setup)
+    assert ([row.mark for row in read.rows], read.problems) == (["RB2"], ())
+
+
 # Bad files
 
 BAD_FILES = [
@@ -724,10 +732,11 @@ def test_numbers_of_a_workbook_keep_what_they_show(tmp_path: Path) -> None:
         (12, *GOOD[1:3], 0.1 + 0.2, 285.0, "A"),
         (7, *GOOD[1:3], 4.6, 0, "A"),
         ("1e3", *GOOD[1:]),
+        (1.1 + 2.2, *GOOD[1:]),
         change=change,
     )
     rows = _from_workbook(path, strict=True).rows
-    assert [row.mark for row in rows] == ["12", "007", "1e3"]
+    assert [row.mark for row in rows] == ["12", "007", "1e3", "3.3"]
     assert rows[0].length.internal == 300.0
 
 
@@ -897,6 +906,23 @@ def test_rows_are_plain_frozen_data(tmp_path: Path) -> None:
     with pytest.raises(AttributeError):
         row.mark = "RB9"  # type: ignore[misc]
     assert hash(row) == hash(pickle.loads(pickle.dumps(row)))
+
+
+def test_the_librarys_catalogues_decide_what_is_known(tmp_path: Path) -> None:
+    text = _csv(
+        (*HEAD, "standard"), (*GOOD, "NZS 3404"), (*_row(mark="RB2", section="125x75x11 UA"), "")
+    )
+    read = _read(tmp_path, text, known=None)
+    assert [row.mark for row in read.rows] == ["RB1"]
+    [problem] = read.problems
+    assert (problem.row, problem.column) == (3, "section")
+    assert "125x75x11 UA" in problem.reason
+    assert "Did you mean" in problem.reason
+
+
+def test_a_very_long_name_is_told_shortly(tmp_path: Path) -> None:
+    [problem] = _read(tmp_path, _csv(HEAD, _row(section="x" * 50_000))).problems
+    assert len(str(problem)) < 1100
 
 
 def test_the_size_limit_is_the_stated_one() -> None:

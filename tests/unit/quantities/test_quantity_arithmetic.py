@@ -28,6 +28,7 @@ from tensionlib.quantities import (
     PRESSURE,
     STRESS,
     US,
+    VOLUME,
     WELD_STRENGTH,
     Quantity,
     parse,
@@ -73,6 +74,7 @@ def test_it_is_a_forallpeople_value() -> None:
         ((8 * mm**3).sqrt(3), 2.0, LENGTH),
         ((8 * mm**3) ** (1 / 3), 2.0, LENGTH),
         ((mm ** (1 / 3)) ** 3, 1.0, LENGTH),
+        (((8 * mm**3) ** (1 / 5)) ** 5, 8.0, VOLUME),
         (2 / (4 * mm), 0.5, role_of((0, -1, 0))),
         (1 / (2 / (4 * mm)), 2.0, LENGTH),
         (3 * kN * mm**4, 3000.0, role_of((1, 4, 0))),
@@ -132,6 +134,9 @@ def test_arithmetic_gives_a_float_where_no_dimension_is_left(value: Any, number:
 def test_a_difference_of_equals_is_nothing() -> None:
     assert 1.001 * 1000.0 != 1001.0
     assert str(1001 * mm - 1.001 * m) == "0 mm"
+    assert str(1001 * mm + -1.001 * m) == "0 mm"
+    assert str(-1.001 * m + 1001 * mm) == "0 mm"
+    assert str(1.001 * METRE - 1.001 * m) == "0 mm"
     assert str(0.3 * m - 0.1 * m - 0.2 * m) == "0 mm"
     assert str(62 * kip - parse("62 kip")) == "0 kN"
 
