@@ -7,7 +7,7 @@ is printed as an assumption by the calculation.
 from __future__ import annotations
 
 from dataclasses import dataclass, fields
-from typing import Any, Literal
+from typing import Any, ClassVar
 
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.quantities import LENGTH, Quantity, count, door, factor
@@ -42,6 +42,15 @@ class _Stated:
             name, value, LENGTH, above=above, at_least=at_least, example=example or None
         )
         object.__setattr__(self, name, quantity)
+
+    def _factor(self) -> None:
+        """A stated k_te, which needs the reason that is printed with it."""
+        stated, reason = vars(self)["k_te"], vars(self)["k_te_reason"]
+        if stated is None:
+            return
+        object.__setattr__(self, "k_te", factor("k_te", stated, above=0.0, at_most=1.0))
+        if not isinstance(reason, str) or not reason.strip():
+            raise InputError("k_te_reason: missing; a stated k_te needs the reason that is printed")
 
     def but(self, **changes: Any) -> Any:
         """A copy with some fields changed.
@@ -128,6 +137,9 @@ class Bolted(_Stated):
     edge_kind : str
         How the member's end and the gusset's edges are cut: "sheared" (or hand flame cut),
         "machine cut" (machine flame cut, sawn or planed) or "rolled".
+    k_te : number, optional
+        Correction factor stated by the engineer where the standard's table has no row for the
+        case; printed with `k_te_reason`.
     """
 
     to: str
@@ -145,7 +157,9 @@ class Bolted(_Stated):
     plate_edge_distance: Length | None = None
     clearance: Length | None = None
     edge_kind: str = "sheared"
-    kind: Literal["bolted"] = "bolted"
+    k_te: float | None = None
+    k_te_reason: str = ""
+    kind: ClassVar[str] = "bolted"
 
     def __post_init__(self) -> None:
         _choice("to", self.to, BOLTED_TO)
@@ -190,6 +204,7 @@ class Bolted(_Stated):
                 "gauge: missing; an angle's bolts need the distance from its heel, for example"
                 " '55 mm'"
             )
+        self._factor()
 
 
 @dataclass(frozen=True)
@@ -232,7 +247,7 @@ class Welded(_Stated):
     slot_clearance: Length | None = None
     k_te: float | None = None
     k_te_reason: str = ""
-    kind: Literal["welded"] = "welded"
+    kind: ClassVar[str] = "welded"
 
     def __post_init__(self) -> None:
         _choice("to", self.to, WELDED_TO)
@@ -262,13 +277,7 @@ class Welded(_Stated):
                 f"transverse: given for an end welded to {self.to!r}; a run across the end is"
                 " accepted on a leg, web, flange or plate"
             )
-        if self.k_te is not None:
-            stated = factor("k_te", self.k_te, above=0.0, at_most=1.0)
-            object.__setattr__(self, "k_te", stated)
-            if not isinstance(self.k_te_reason, str) or not self.k_te_reason.strip():
-                raise InputError(
-                    "k_te_reason: missing; a stated k_te needs the reason that is printed"
-                )
+        self._factor()
 
 
 End = Bolted | Welded

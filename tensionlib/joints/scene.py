@@ -8,6 +8,7 @@ dimensions can write them as such.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 from typing import Literal
 
 Style = Literal[
@@ -150,9 +151,9 @@ def chain_x(
     at: float, reach: float, stops: list[float], labels: list[str], *, above: bool = False
 ) -> Chain:
     """A chain along x. Labels stand over the line where all fit, else spread beyond it."""
-    centres = [(a + b) / 2 for a, b in zip(stops, stops[1:], strict=False)]
+    centres = [(a + b) / 2 for a, b in pairwise(stops)]
     widths = [text_width(label) for label in labels]
-    fits = all(width <= b - a - 0.6 for width, a, b in zip(widths, stops, stops[1:], strict=False))
+    fits = all(width <= b - a - 0.6 for width, (a, b) in zip(widths, pairwise(stops), strict=True))
     if fits:
         texts = [Text(c, at - 1.0, t, "middle") for c, t in zip(centres, labels, strict=True)]
         return Chain("x", at, tuple(stops), reach, tuple(texts), ())
@@ -168,7 +169,7 @@ def chain_y(
     at: float, reach: float, stops: list[float], labels: list[str], *, side: Anchor = "end"
 ) -> Chain:
     """A chain along y, its labels beside the line: to the left ("end") or right ("start")."""
-    centres = [(a + b) / 2 for a, b in zip(stops, stops[1:], strict=False)]
+    centres = [(a + b) / 2 for a, b in pairwise(stops)]
     places = spread(centres, [TEXT_HEIGHT * 1.02] * len(labels), 0.5)
     sign = -1.0 if side == "end" else 1.0
     x = at + sign * 3.6

@@ -7,6 +7,7 @@ force, from the element's reference edge (the heel of an angle) upwards.
 from __future__ import annotations
 
 from dataclasses import dataclass
+from itertools import pairwise
 
 from tensionlib.joints.scene import (
     TEXT_HEIGHT,
@@ -245,9 +246,9 @@ class _Sketch:
             self.items.append(chain)
             at += 15.0 if chain.leaders else 9.0
         if view.across:
-            stops_y = sorted((self._at(0.0, y)[1] for y in view.across))
+            stops_y = sorted(self._at(0.0, y)[1] for y in view.across)
             sizes = sorted(view.across, reverse=True)
-            labels = [_mm(a - b) for a, b in zip(sizes, sizes[1:], strict=False)]
+            labels = [_mm(a - b) for a, b in pairwise(sizes)]
             x = self._at(-self.back, 0.0)[0]
             self.items.append(chain_y(x - 5.0, self._at(0.0, 0.0)[0], stops_y, labels))
         return at - 3.0
@@ -286,7 +287,7 @@ class _Sketch:
 
 
 def _chain_labels(stops: tuple[float, ...]) -> list[str]:
-    return [_mm(b - a) for a, b in zip(stops, stops[1:], strict=False)]
+    return [_mm(b - a) for a, b in pairwise(stops)]
 
 
 # Shapes in their places ---------------------------------------------------------------------

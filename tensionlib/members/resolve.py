@@ -53,6 +53,8 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
         "b": Number(place.width, f"{section.designation}: {section.source}"),
         **_plate(end.plate),
     }
+    if end.k_te is not None:
+        common["k_te"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
     choices = {"label": label, "kind": end.kind, "to": end.to, "shape": section.shape}
     plate_steel = grade(end.plate.steel)
     plate_steel.suits("plate")
@@ -156,8 +158,6 @@ def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
     }
     if end.transverse is not None:
         numbers["l_t"] = Number(_length(end.transverse), _STATED)
-    if end.k_te is not None:
-        numbers["k_te"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
     if end.to == "slot":
         numbers["n_s"] = Number(2.0, _COUNTED)
         numbers["c_s"] = Number(_length(end.slot_clearance), _STATED)

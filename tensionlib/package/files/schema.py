@@ -27,7 +27,6 @@ from pydantic import (
     GetJsonSchemaHandler,
     Tag,
     ValidationInfo,
-    WithJsonSchema,
 )
 from pydantic.json_schema import GenerateJsonSchema, JsonSchemaValue
 from pydantic_core import CoreSchema, core_schema
@@ -55,7 +54,7 @@ NAME_TAG, BOLTED_TAG, WELDED_TAG = "\x00name", "\x00bolted", "\x00welded"
 TAGS = (NAME_TAG, BOLTED_TAG, WELDED_TAG)
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, eq=False)
 class Taken:
     """A field taken by a function of its name and value, with its own JSON Schema."""
 
@@ -116,6 +115,12 @@ def whole(at_most: int | None = None) -> Taken:
     return Taken(lambda name, value: count(name, value, at_most=at_most), json)
 
 
+def _name(name: str, value: Any) -> str:
+    if not isinstance(value, str):
+        raise InputError(f"got {shown(value)}; text in quotation marks is due")
+    return named(value)
+
+
 def _option(name: str, value: Any) -> str | int | float | bool:
     if isinstance(value, str):
         return text_line(value)
@@ -133,9 +138,7 @@ def _date(value: object) -> object:
 
 Block = Annotated[str, AfterValidator(text_block)]
 Line = Annotated[str, AfterValidator(text_line)]
-Name = Annotated[
-    str, AfterValidator(named), WithJsonSchema({"type": "string", "minLength": 1, "pattern": "\\S"})
-]
+Name = Annotated[str, Taken(_name, {"type": "string", "minLength": 1, "pattern": "\\S"})]
 Date = Annotated[str, BeforeValidator(_date), AfterValidator(text_line)]
 Force = Annotated[
     Quantity,
@@ -207,7 +210,7 @@ class GussetTable(Table):
 class BoltedTable(Table):
     """A bolted end."""
 
-    kind: Literal["bolted"]
+    kind: Annotated[Literal["bolted"], one_of("bolted")]
     to: Annotated[str, one_of(*BOLTED_TO)] = Field(examples=["long leg"])
     bolts: Name = Field(examples=["M20 8.8/S"])
     threads: Annotated[str, one_of(*THREADS)] = Field(examples=["in shear plane"])
@@ -228,7 +231,7 @@ class BoltedTable(Table):
 class WeldedTable(Table):
     """A welded end."""
 
-    kind: Literal["welded"]
+    kind: Annotated[Literal["welded"], one_of("welded")]
     to: Annotated[str, one_of(*WELDED_TO)] = Field(examples=["long leg"])
     leg_size: Annotated[Quantity, above_zero("6 mm")] = Field(examples=["6 mm"])
     plate: GussetTable = Field(examples=[{"thickness": "12 mm", "steel": "AS/NZS 3678 250"}])
