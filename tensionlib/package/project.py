@@ -180,8 +180,8 @@ def check_file(
 
     Raises
     ------
-    DesignFileError, ScheduleError
-        For a file that is not valid.
+    DesignFileError
+        For a file or a schedule that is not valid, all its problems listed.
     MemberError
         For members that cannot be designed.
     """

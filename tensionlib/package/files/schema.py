@@ -151,6 +151,13 @@ Force = Annotated[
         },
     ),
 ]
+StatedFactor = Annotated[
+    float | None,
+    Taken(
+        lambda name, value: factor(name, value, above=0.0, at_most=1.0),
+        {"type": "number", "exclusiveMinimum": 0, "maximum": 1},
+    ),
+]
 Option = Annotated[
     str | int | float | bool, Taken(_option, {"type": ["string", "number", "boolean"]})
 ]
@@ -226,6 +233,8 @@ class BoltedTable(Table):
     plate_edge_distance: Annotated[Quantity | None, above_zero("50 mm")] = None
     clearance: Annotated[Quantity | None, zero_or_more("2 mm")] = None
     edge_kind: Annotated[str, one_of(*EDGES)] = "sheared"
+    k_te: StatedFactor = None
+    k_te_reason: Line = ""
 
 
 class WeldedTable(Table):
@@ -241,13 +250,7 @@ class WeldedTable(Table):
     quality: Annotated[str, one_of(*QUALITIES)] = "SP"
     metal: Name = "E48XX"
     slot_clearance: Annotated[Quantity | None, zero_or_more("3 mm")] = None
-    k_te: Annotated[
-        float | None,
-        Taken(
-            lambda name, value: factor(name, value, above=0.0, at_most=1.0),
-            {"type": "number", "exclusiveMinimum": 0, "maximum": 1},
-        ),
-    ] = None
+    k_te: StatedFactor = None
     k_te_reason: Line = ""
 
 

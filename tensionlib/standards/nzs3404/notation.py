@@ -92,6 +92,24 @@ NZS = Notation(
         Symbol("V_bt", "V_{bt}", FORCE, "nominal capacity of the ply in tear-out, a bolt"),
         Symbol("V_b", "V_{b}", FORCE, "nominal capacity of the ply at a bolt"),
         Symbol("phiV_b", _PHI + "V_{b}", FORCE, "design capacity of the member's plies", "φV_b"),
+        # Block shear
+        Symbol("n_v", "n_{v}", COUNT, "shear planes of the block, each ply"),
+        Symbol("L_v", "L_{v}", LENGTH, "length of a shear plane"),
+        Symbol("A_gv", "A_{gv}", AREA, "gross shear area of the block"),
+        Symbol("A_nv", "A_{nv}", AREA, "net shear area of the block"),
+        Symbol("b_t", "b_{t}", LENGTH, "net width of the block in tension"),
+        Symbol("A_nt", "A_{nt}", AREA, "net tension area of the block"),
+        Symbol("k_bs", "k_{bs}", FACTOR, "factor for the spread of tension on the block"),
+        Symbol("N_bs", "N_{bs}", FORCE, "nominal capacity of the block"),
+        Symbol("phiN_bs", _PHI + "N_{bs}", FORCE, "design capacity of the block", "φN_bs"),
+        Symbol("L_vp", "L_{vp}", LENGTH, "length of a shear plane in the gusset"),
+        Symbol("A_gvp", "A_{gvp}", AREA, "gross shear area of the gusset's block"),
+        Symbol("A_nvp", "A_{nvp}", AREA, "net shear area of the gusset's block"),
+        Symbol("A_ntp", "A_{ntp}", AREA, "net tension area of the gusset's block"),
+        Symbol("N_bsp", "N_{bsp}", FORCE, "nominal capacity of the gusset's block"),
+        Symbol(
+            "phiN_bsp", _PHI + "N_{bsp}", FORCE, "design capacity of the gusset's block", "φN_bsp"
+        ),
         # Gusset
         Symbol("t_p", "t_{p}", LENGTH, "thickness of the gusset"),
         Symbol("b_p", "b_{p}", LENGTH, "width of gusset there is"),

@@ -21,7 +21,7 @@ HOLES = ThresholdTable(
 
 NOT_CHECKED = (
     "the members and supports the gussets are fixed to, and the gussets' own fixing to them",
-    "block shear of member and gusset (NZS 3404:1997 as remembered has no explicit rule for it)",
+    "block shear of any block but those shown; to the gusset's side edge only where it is stated",
     "compression, when the force reverses, in the member and the gussets",
     "bending from self-weight, lateral load or an eccentricity that the factor k_te does not cover",
     "earthquake: member category, overstrength of the brace and the detailing that follows from it",
@@ -95,8 +95,10 @@ def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry
         )
 
     for end in ends:
-        connect = bolted_end if end.choice("kind") == "bolted" else welded_end
-        connect(work, end, N_c, f_u)
+        if end.choice("kind") == "bolted":
+            bolted_end(work, end, N_c, f_y, f_u)
+        else:
+            welded_end(work, end, N_c)
     work.leaves_out(*NOT_CHECKED)
 
 

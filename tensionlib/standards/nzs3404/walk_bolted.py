@@ -7,10 +7,16 @@ from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
 from tensionlib.standards.nzs3404 import bolts, detailing, factors, gusset
+from tensionlib.standards.nzs3404.walk_block import (
+    Ply,
+    check_blocks,
+    gusset_blocks,
+    member_blocks,
+)
 from tensionlib.standards.nzs3404.walk_gusset import check_gusset
 
 
-def bolted_end(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
+def bolted_end(work: Working, end: Inputs, N_c: Entry, f_y: Entry, f_u: Entry) -> None:
     """Write the checks of a bolted end for the design action on the connection."""
     label = end.choice("label")
     with work.part(label + "Bolts"):
@@ -24,11 +30,18 @@ def bolted_end(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
             )
     with work.part(label + "Member at the bolts"):
         _member_plies(work, end, N_c, f_u)
+        if blocks := member_blocks(end):
+            if end.choice("side_edge") != "none":
+                end.keep("e_2", _side_distance(work, end))
+            n_e, e_1, t = (end.take(work, name) for name in ("n_e", "e_1", "t"))
+            check_blocks(work, end, N_c, blocks, Ply(n_e, e_1, t, f_y, f_u, "e_2", ""))
     with work.part(label + "Gusset"):
         t_p = end.take(work, "t_p")
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
         _gusset_plies(work, end, N_c, t_p, f_up)
         check_gusset(work, end, N_c, _spread(work, end), f_yp, f_up)
+        n_g, e_p = end.take(work, "n_g"), end.take(work, "e_p")
+        check_blocks(work, end, N_c, gusset_blocks(end), Ply(n_g, e_p, t_p, f_yp, f_up, "e_s", "p"))
     with work.part(label + "Bolt distances"):
         _distances(work, end)
 
@@ -189,7 +202,7 @@ def _edges(work: Working, end: Inputs, d_f: Entry, t: Entry, t_p: Entry) -> None
     work.check("greatest end distance, member", e_1, e_max, "9.6.4", kind="detailing")
     side = end.choice("side_edge")
     if side != "none":
-        e_2 = _side_distance(work, end)
+        e_2 = end.kept_line("e_2")
         e_min2 = e_min if side == cut else _least_edge(work, side, d_f, "k_e2", "e_min2")
         work.check("least edge distance, member", e_min2, e_2, "Table 9.6.2", kind="detailing")
         work.check("greatest edge distance, member", e_2, e_max, "9.6.4", kind="detailing")

@@ -17,7 +17,7 @@ LEGS = ThresholdTable(
 LAP_CLAUSE = "Table 9.7.3.10(2)"
 
 
-def welded_end(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
+def welded_end(work: Working, end: Inputs, N_c: Entry) -> None:
     """Write the checks of a welded end for the design action on the connection."""
     label = end.choice("label")
     with work.part(label + "Welds"):

@@ -1,0 +1,1 @@
+"""Files in and packages out: design files, schedules, the PDF package, the command line."""
