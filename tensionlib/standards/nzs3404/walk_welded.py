@@ -71,6 +71,11 @@ def _welds(work: Working, end: Inputs, N_c: Entry) -> None:
         f"{end.choice('label')}every run of weld carries the same force per unit length; the weld's"
         " centroid may stand off the member's line (accepted for static loads, common practice)"
     )
+    if end.choice("to") == "bar":
+        work.assume(
+            f"{end.choice('label')}the fillets between the round bar and the gusset have the throat"
+            " of a right-angled fillet of the stated leg, which the weld procedure is to show"
+        )
 
 
 def _lap_factor(work: Working, end: Inputs) -> Entry:
