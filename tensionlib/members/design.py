@@ -73,7 +73,7 @@ def design(
             member,
             end,
             label=f"End {i}: " if two else "",
-            prefix=f"end {i} " if two else "",
+            prefix=f"end {i}: " if two else "end: ",
         )
         for i, end in enumerate(member.ends, start=1)
     )

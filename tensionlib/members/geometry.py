@@ -152,9 +152,15 @@ def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
         return
     if end.gauge is not None:
         refuse("gauge", f"bolts through the {end.to} stand about its middle; leave gauge out")
-    if outer / 2 + radius >= place.width / 2:
+    clear = place.width
+    if place.element == "web":
+        # Between the flanges of a channel or an I; a tee has one, and its lines stand in the middle.
+        clear -= 2 * section.thickness("flange")
+    if outer / 2 + radius >= clear / 2:
         name = "line_spacing" if end.lines == 2 else "bolts"
-        raise InputError(f"{name}: the hole leaves the {place.element}, {place.width:g} mm wide")
+        raise InputError(
+            f"{name}: the hole leaves the {place.element}, which has {clear:g} mm for it"
+        )
     if place.element == "flange" and section.shape in ("I", "tee"):
         web = section.thickness("web")
         if outer / 2 - radius <= web / 2:

@@ -31,7 +31,7 @@ def member_inputs(member: Member) -> Inputs:
         numbers["r_min"] = Number(section.r_min, source)
     if "d" in section.dims:
         numbers["d"] = Number(section.dims["d"], source)
-    return Inputs({"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u"))
+    return Inputs({"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u"), "member: ")
 
 
 def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import os
 import sys
+import tempfile
 from pathlib import Path
 from typing import TYPE_CHECKING, Any, TextIO
 
@@ -54,10 +55,6 @@ def execute(
         ) from missing
     from copy import deepcopy
 
-    config = Config()
-    if sys.platform != "win32":
-        # Sockets of the file system: no port is opened, and nobody else can listen.
-        config.KernelManager.transport = "ipc"
     running = deepcopy(notebook)
     bar = ProgressBar(name, len(running.cells), sys.stderr if progress else None)
     at = 0
@@ -67,29 +64,36 @@ def execute(
         at = cell_index + 1
         bar.show(at)
 
-    client = NotebookClient(
-        running,
-        config=config,
-        kernel_name=_kernel(running),
-        resources={"metadata": {"path": str(folder)}},
-        timeout=None,
-        record_timing=False,
-        store_widget_state=False,
-        coalesce_streams=True,
-        on_cell_start=started,
-    )
     environment = {key: text for key, text in os.environ.items() if key != _SOMEBODY_LOOKS}
     # The order of sets of text follows this seed; a package must not change from run to run.
     environment["PYTHONHASHSEED"] = "0"
-    try:
-        client.execute(env=environment)
-    except CellExecutionError as error:
-        why = plain(f"{error.ename}: {error.evalue}")
-        raise NotebookError(f"{name}: cell {at} stopped with {why}") from None
-    except DeadKernelError:
-        raise NotebookError(f"{name}: the kernel died in cell {at}") from None
-    finally:
-        bar.close()
+    # The sockets lie in this folder; a relative name would mean another place to the kernel.
+    with tempfile.TemporaryDirectory() as sockets:
+        config = Config()
+        config.KernelManager.connection_file = os.path.join(sockets, "kernel.json")
+        if sys.platform != "win32":
+            # Sockets of the file system: no port is opened, and nobody else can listen.
+            config.KernelManager.transport = "ipc"
+        client = NotebookClient(
+            running,
+            config=config,
+            kernel_name=_kernel(running),
+            resources={"metadata": {"path": str(folder)}},
+            timeout=None,
+            record_timing=False,
+            coalesce_streams=True,
+            on_cell_start=started,
+        )
+        try:
+            client.execute(env=environment)
+        except CellExecutionError as error:
+            why = plain(f"{error.ename}: {error.evalue}")
+            raise NotebookError(f"{name}: cell {at} stopped with {why}") from None
+        except DeadKernelError:
+            raise NotebookError(f"{name}: the kernel died in cell {at}") from None
+        finally:
+            bar.close()
+    running.metadata.pop("widgets", None)
     return running
 
 
@@ -99,10 +103,13 @@ def _kernel(notebook: NotebookNode) -> str:
 
     asked = str(notebook.metadata.get("kernelspec", {}).get("name", "python3"))
     language = notebook.metadata.get("kernelspec", {}).get("language", "python")
-    if asked in KernelSpecManager().find_kernel_specs():
+    installed = KernelSpecManager().find_kernel_specs()
+    if asked in installed:
         return asked
     if language != "python":
         raise NotebookError(f"the kernel {asked!r} ({language}) is not installed here")
+    if "python3" not in installed:
+        raise NotebookError('no Python kernel is installed here: pip install "tensionlib[package]"')
     return "python3"
 
 

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import io
-from pathlib import Path
+import sys
 
 import pytest
 
@@ -68,8 +68,16 @@ def test_an_unknown_python_kernel_is_replaced_and_another_language_refused(make,
         execute(notebook, tmp_path, progress=False)
 
 
+def test_where_no_python_kernel_is_installed_the_extra_is_named(run, monkeypatch):
+    from jupyter_client.kernelspec import KernelSpecManager
+
+    monkeypatch.setattr(KernelSpecManager, "find_kernel_specs", lambda manager: {})
+    with pytest.raises(NotebookError, match=r'no Python kernel.*"tensionlib\[package\]"'):
+        run("1")
+
+
 def test_without_nbclient_the_extra_is_named(run, monkeypatch):
-    monkeypatch.setitem(__import__("sys").modules, "nbclient", None)
+    monkeypatch.setitem(sys.modules, "nbclient", None)
     with pytest.raises(TensionlibError, match=r'pip install "tensionlib\[package\]"'):
         run("1")
 
@@ -101,4 +109,3 @@ def test_the_progress_bar_is_silent_anywhere_else(stream):
 def test_the_run_needs_no_network_port(run):
     executed = run("import json, sys\nprint(json.load(open(sys.argv[2]))['transport'])")
     assert executed["cells"][0]["outputs"][0]["text"] == "ipc\n"
-    assert Path.cwd().exists()

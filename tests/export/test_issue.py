@@ -176,7 +176,7 @@ def test_the_exporter_reads_no_file_for_a_notebook_that_lies_nowhere(make, tmp_p
     notebook = make.notebook(make.code(make.shown(make.project())))
     pdf, _ = PackageExporter(paper="Letter").from_notebook_node(notebook)
     reader = pypdf.PdfReader(io.BytesIO(pdf))
-    assert sorted(reader.attachments) == ["notebook.ipynb", "record.json"]
+    assert sorted(reader.attachments) == ["Notebook.ipynb", "record.json"]
     assert float(reader.pages[0].mediabox.width) == pytest.approx(612)
 
 

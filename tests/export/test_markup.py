@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import sys
+
 import pytest
 
 from tensionlib.errors import InputError, TensionlibError
@@ -125,6 +127,6 @@ def test_a_hostile_formula_leaves_its_neighbours_alone(hostile):
 
 
 def test_without_pandoc_the_extra_is_named(monkeypatch):
-    monkeypatch.setitem(__import__("sys").modules, "pypandoc", None)
+    monkeypatch.setitem(sys.modules, "pypandoc", None)
     with pytest.raises(TensionlibError, match=r'pip install "tensionlib\[package\]"'):
         markup("a")
