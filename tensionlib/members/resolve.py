@@ -21,7 +21,7 @@ def member_inputs(member: Member) -> Inputs:
     """Numbers, choices and tables of the member itself."""
     section, steel = member.profile, member.material
     steel.suits(section.shape)
-    source = f"{section.designation}: {section.source}"
+    source = section.source
     numbers = {
         "A_g": Number(section.A, source),
         "L": Number(_length(member.length), _STATED),
@@ -49,8 +49,8 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
     common = {
         "n_e": Number(float(place.plies), _COUNTED),
         "n_g": Number(float(place.gussets), _COUNTED),
-        "t": Number(place.thickness, f"{section.designation}: {section.source}"),
-        "b": Number(place.width, f"{section.designation}: {section.source}"),
+        "t": Number(place.thickness, section.source),
+        "b": Number(place.width, section.source),
         **_plate(end.plate),
     }
     if end.k_te is not None:
@@ -96,9 +96,7 @@ def _table(steel: Grade, strength: str) -> ThresholdTable:
     bands = tuple(
         Band(row.limit, row.closed, row.f_y if strength == "f_y" else row.f_u) for row in steel.rows
     )
-    return ThresholdTable(
-        f"{strength} by thickness", f"{steel.standard}, {steel.known}", {steel.name: bands}
-    )
+    return ThresholdTable(f"{strength} by thickness", steel.known, {steel.name: bands})
 
 
 def _tables(steel: Grade, f_y: str, f_u: str) -> dict[str, tuple[ThresholdTable, str]]:
@@ -110,7 +108,7 @@ def _tables(steel: Grade, f_y: str, f_u: str) -> dict[str, tuple[ThresholdTable,
 
 def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]]:
     fastener = bolt(end.bolts)
-    source = f"{fastener.size} {fastener.grade}: {fastener.source}"
+    source = fastener.source
     planes = Number(float(place.planes), _COUNTED)
     numbers = {
         "d_f": Number(fastener.d_f, source),
@@ -154,7 +152,7 @@ def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
         "t_w": Number(_length(end.leg_size), _STATED),
         "l_1": Number(_length(end.length_1), _STATED),
         "l_2": Number(_length(end.length_2), _STATED),
-        "f_uw": Number(metal.f_uw, f"{metal.name}: {metal.source}"),
+        "f_uw": Number(metal.f_uw, metal.source),
     }
     if end.transverse is not None:
         numbers["l_t"] = Number(_length(end.transverse), _STATED)

@@ -16,8 +16,8 @@ class WeldMetal:
     source: str
 
 
-_OLD = "NZS 3404:1997 and AS 4100:1998 designations, from memory, sure"
-_NEW = "AS/NZS 4855 designations of later editions, from memory, fairly sure"
+_OLD = "NZS 3404:1997, from memory, sure"
+_NEW = "AS/NZS 4855, from memory, fairly sure"
 
 METALS: dict[str, WeldMetal] = {
     metal.name: metal

@@ -357,19 +357,25 @@ class _Page:
         def write(limit: float) -> str:
             return format_value(limit, by.role, self.calc.view)
 
-        tested = f"{by.text} = {self._text[line.by]}"
+        said = [f"at {self._text[line.by]}"]
         if which > 0:
             before = bands[which - 1]
-            tested = f"{write(before.limit)} {'<' if before.closed else '≤'} {tested}"
+            said.append(f"{'over' if before.closed else 'from'} {write(before.limit)}")
         if math.isfinite(bands[which].limit):
-            tested += f" {'≤' if bands[which].closed else '<'} {write(bands[which].limit)}"
-        return {"note": f"{line.row}: {tested} ({line.table.source})"}
+            said.append(
+                f"{'up to' if bands[which].closed else 'under'} {write(bands[which].limit)}"
+            )
+        return {"note": f"{line.row}: {', '.join(said)} ({line.table.source})"}
 
     def write_extreme(self, index: int, line: Extreme) -> Row:
         if len(line.args) == 1:
             return {"note": line.note}
-        ruling = self._symbol(line.ruling(self.values_)).text
-        return {"note": _join(line.note, f"{ruling} rules"), "ruling": ruling}
+        ruling = line.ruling(self.values_)
+        title = self.lines[ruling].title
+        return {
+            "note": _join(line.note, f"what rules: {title}"),
+            "ruling": self._symbol(ruling).text,
+        }
 
     def write_holds(self, index: int, line: Holds) -> Row:
         condition = line.condition

@@ -191,7 +191,8 @@ def test_least_and_greatest_name_the_one_that_rules():
     low = work.least("N_least", e["N"], other, title="least")
     assert work.values[low.index] == 50e3
     line = Calculation.of(work, Heading("P1", "", "")).record()["parts"][0]["lines"][-1]
-    assert line["note"] == "N_2 rules"
+    assert line["note"] == "what rules: other capacity"
+    assert line["ruling"] == "N_2"
     assert line["steps"][0] == r"\min\left(N,\ N_{2}\right)"
     assert line["text"] == "N_least = min(N; N_2) = min(302.4 kN; 50 kN) = 50 kN"
 
@@ -315,3 +316,13 @@ def test_condition_must_be_one_comparison():
         @tl.condition(OWN, title="odd")
         def odd(t, b):
             return t <= 2 * b
+
+
+def test_a_threshold_says_which_band_held():
+    def note(t):
+        lines = _calculation(t=t).record()["parts"][0]["lines"]
+        return next(line["note"] for line in lines if line["kind"] == "upto")
+
+    assert note("9 mm") == "plain: at 9 mm, under 10 mm (a table of the test's own)"
+    assert note("10 mm") == "plain: at 10 mm, from 10 mm, up to 20 mm (a table of the test's own)"
+    assert note("21 mm") == "plain: at 21 mm, over 20 mm, up to 50 mm (a table of the test's own)"
