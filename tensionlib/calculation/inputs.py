@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Hashable, Mapping
 from dataclasses import dataclass, field
 from typing import Any
 
@@ -34,6 +34,20 @@ class Inputs:
     tables: Mapping[str, tuple[ThresholdTable, str]] = field(default_factory=dict)
     prefix: str = ""
     _kept: dict[str, Entry] = field(default_factory=dict, repr=False, compare=False)
+
+    @property
+    def signature(self) -> Hashable:
+        """All of this that can steer a walk: choices, which numbers are stated, tables' rows."""
+        return (
+            self.prefix,
+            tuple(self.choices.items()),
+            frozenset(self._numbers),
+            tuple((name, table.name, row) for name, (table, row) in self.tables.items()),
+        )
+
+    def numbers(self) -> dict[str, Number]:
+        """The numbers by the key each has on a sheet: for filling, never for a walk."""
+        return {self.prefix + name: number for name, number in self._numbers.items()}
 
     def choice(self, name: str) -> str:
         try:

@@ -9,6 +9,7 @@ from __future__ import annotations
 import math
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from functools import cached_property
 from typing import TYPE_CHECKING, Any, Literal, NoReturn
 
 from tensionlib.calculation import dispatch
@@ -219,15 +220,30 @@ class Sheet:
 
     lines: tuple[Line, ...]
 
-    @property
+    @cached_property
     def checks(self) -> tuple[int, ...]:
         """Indices of the check lines."""
         return tuple(i for i, line in enumerate(self.lines) if isinstance(line, CheckLine))
 
+    @cached_property
+    def givens(self) -> tuple[tuple[int, str], ...]:
+        """Index and key of each input line."""
+        return tuple((i, x.key) for i, x in enumerate(self.lines) if isinstance(x, Given))
+
     @property
     def keys(self) -> tuple[str, ...]:
         """Names of the inputs the sheet is filled with."""
-        return tuple(line.key for line in self.lines if isinstance(line, Given))
+        return tuple(key for _, key in self.givens)
+
+    @cached_property
+    def decisions(self) -> tuple[tuple[int, bool], ...]:
+        """Index of each tested condition and the way the sheet records for it."""
+        return tuple((i, x.decision) for i, x in enumerate(self.lines) if isinstance(x, Holds))
+
+    @cached_property
+    def _computed(self) -> tuple[tuple[int, Line], ...]:
+        words = (Given, Note, NotCovered)
+        return tuple((i, x) for i, x in enumerate(self.lines) if not isinstance(x, words))
 
     def evaluate(self, inputs: Mapping[str, Any]) -> tuple[Any, ...]:
         """What each line comes to for these inputs: floats or arrays of shape (n,).
@@ -238,12 +254,15 @@ class Sheet:
             For a missing input, or a name the sheet does not have.
         """
         keys = set(self.keys)
-        for what, names in (("missing", keys - set(inputs)), ("unknown", set(inputs) - keys)):
-            if names:
-                raise InputError(f"inputs: {what} {', '.join(sorted(names))}")
-        values: list[Any] = []
-        for line in self.lines:
-            values.append(inputs[line.key] if isinstance(line, Given) else line.evaluate(values))
+        if keys != inputs.keys():
+            missing, unknown = keys - inputs.keys(), inputs.keys() - keys
+            what, names = ("missing", missing) if missing else ("unknown", unknown)
+            raise InputError(f"inputs: {what} {', '.join(sorted(names))}")
+        values: list[Any] = [None] * len(self.lines)
+        for index, key in self.givens:
+            values[index] = inputs[key]
+        for index, line in self._computed:
+            values[index] = line.evaluate(values)
         return tuple(values)
 
     def fill(self, inputs: Mapping[str, Any]) -> Filled:
@@ -264,7 +283,6 @@ class Sheet:
         shape = shapes.pop() if shapes else (1,)
         values = self.evaluate(inputs)
         follows = np.ones(shape, dtype=np.bool_)
-        for line, value in zip(self.lines, values, strict=True):
-            if isinstance(line, Holds):
-                follows &= np.asarray(value) == line.decision
+        for index, decision in self.decisions:
+            follows &= np.asarray(values[index]) == decision
         return Filled(self, values, follows)

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+from tensionlib.calculation.inputs import Number
 from tensionlib.calculation.result import Calculation, Heading
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import InputError
 from tensionlib.joints.ends import Bolted
+from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
 from tensionlib.members.resolve import end_inputs, member_inputs
@@ -25,8 +27,7 @@ from tensionlib.quantities import (
 from tensionlib.standards import Standard
 from tensionlib.standards import standard as find_standard
 from tensionlib.steel import bolt, grade, weld_metal
-
-FORCE_PART = "Design force"
+from tensionlib.version import __version__
 
 
 def design(
@@ -65,7 +66,6 @@ def design(
     if not isinstance(member, Member):
         raise InputError(f"member: got {member!r}; a Member(...) is due")
     chosen = find_standard(standard)
-    work, N_star = _force(force, chosen.notation, origin)
     holes = _fitting_holes(member, chosen)
     two = len(member.ends) == 2
     ends = tuple(
@@ -77,47 +77,55 @@ def design(
         )
         for i, end in enumerate(member.ends, start=1)
     )
-    chosen.design(work, member_inputs(member), ends, N_star)
-    if not two:
-        work.assume("both ends are connected in the same way")
-    heading = Heading(
-        mark=member.mark,
-        title=member.title,
-        subject=f"{member.profile.designation}, {member.material.name}",
-        standard=chosen.source,
-        standard_key=chosen.key,
-        force=N_star.index,
-    )
-    demand = work.values[N_star.index]
-    return Calculation.of(
-        work,
-        heading,
-        sources=((chosen.source, "member and connection design"), *_materials(member)),
-        draw=lambda: sketches(
-            member,
-            f"{N_star.symbol.text} = {format_value(demand, FORCE, view, SUMMARY_FIGURES)}",
-            holes,
-        ),
-        view=view,
-    )
-
-
-def _force(force: Quantity | str | Entry, notation: Notation, origin: str) -> tuple[Working, Entry]:
+    inputs = member_inputs(member)
     if isinstance(force, Entry):
-        if not isinstance(force.owner, Working):
-            raise InputError("force: this entry belongs to no working")
-        if force.symbol.role != FORCE:
-            raise InputError(
-                f"force: got {force.symbol.text}, {force.symbol.role.phrase}; a force is due"
-            )
-        work = force.owner.fork(notation)
-        N_star = work.adopt(force)
-        _refuse_compression(work.values[N_star.index])
-        return work, N_star
-    number = door("force", force, FORCE, example="285 kN").internal
-    _refuse_compression(number)
-    work = Working(FORCE_PART, notation)
-    return work, work.given_number("N_star", number, origin, "N_star")
+        work, N_star = _continued(force, chosen.notation)
+        chosen.design(work, inputs, ends, N_star)
+        written = Written(work.sheet(), tuple(work.assumptions), tuple(work.not_checked))
+        filling = Filling(written, tuple(work.values), dict(work.origins))
+        at = N_star.index
+    else:
+        number = door("force", force, FORCE, example="285 kN").internal
+        _refuse_compression(number)
+        filling = fill(Case(chosen, Number(number, origin), inputs, ends))
+        at = 0
+    symbol = filling.written.sheet.lines[at].symbol
+    assert symbol is not None
+    label = f"{symbol.text} = {format_value(filling.values[at], FORCE, view, SUMMARY_FIGURES)}"
+    same = () if two else ("both ends are connected in the same way",)
+    return Calculation(
+        sheet=filling.written.sheet,
+        values=filling.values,
+        heading=Heading(
+            mark=member.mark,
+            title=member.title,
+            subject=f"{member.profile.designation}, {member.material.name}",
+            standard=chosen.source,
+            standard_key=chosen.key,
+            force=at,
+        ),
+        origins=filling.origins,
+        assumptions=filling.written.assumptions + same,
+        not_checked=filling.written.not_checked,
+        sources=((chosen.source, "member and connection design"), *_materials(member)),
+        draw=lambda: sketches(member, label, holes),
+        view=view,
+        version=__version__,
+    )
+
+
+def _continued(force: Entry, notation: Notation) -> tuple[Working, Entry]:
+    """The user's working, to be gone on with, and the design force in it."""
+    if not isinstance(force.owner, Working):
+        raise InputError("force: this entry belongs to no working")
+    if force.symbol.role != FORCE:
+        raise InputError(
+            f"force: got {force.symbol.text}, {force.symbol.role.phrase}; a force is due"
+        )
+    work = force.owner.fork(notation)
+    N_star = work.adopt(force)
+    _refuse_compression(work.values[N_star.index])
+    return work, N_star
 
 
 def _refuse_compression(force: float) -> None:

@@ -154,7 +154,7 @@ def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
         refuse("gauge", f"bolts through the {end.to} stand about its middle; leave gauge out")
     clear = place.width
     if place.element == "web":
-        # Between the flanges of a channel or an I; a tee has one, and its lines stand in the middle.
+        # Between the flanges; a tee has one, and its lines stand in the middle.
         clear -= 2 * section.thickness("flange")
     if outer / 2 + radius >= clear / 2:
         name = "line_spacing" if end.lines == 2 else "bolts"

@@ -84,6 +84,15 @@ class Bolt:
 _NAME = re.compile(r"(M\d+)\s*[- ]?\s*(\d+\.\d+)?\s*(?:/\s*([A-Za-z]+))?", re.IGNORECASE)
 
 
+def _names() -> list[str]:
+    return [
+        f"{size} {grade}/{category}"
+        for size in SIZES
+        for grade in CLASSES
+        for category in (CATEGORIES if grade != "4.6" else ("S",))
+    ]
+
+
 def bolt(name: str) -> Bolt:
     """A bolt by size, class and category: "M20 8.8/S", "M24 8.8/TB", "M16 4.6/S".
 
@@ -94,26 +103,20 @@ def bolt(name: str) -> Bolt:
     InputError, DataNotFoundError
         For a size, class or category not on offer.
     """
-    names = [
-        f"{size} {grade}/{category}"
-        for size in SIZES
-        for grade in CLASSES
-        for category in (CATEGORIES if grade != "4.6" else ("S",))
-    ]
     if not isinstance(name, str):
         raise InputError(f"bolts: got {name!r}; name them, for example 'M20 8.8/S'")
     found = _NAME.fullmatch(name.strip())
     if found is None or found[2] is None:
         raise InputError(
             f"bolts: got {name!r}; size, class and category are due, for example 'M20 8.8/S'."
-            + did_you_mean(name, names)
+            + did_you_mean(name, _names())
         )
     size, grade, category = found[1].upper(), found[2], (found[3] or "S").upper()
     if size not in SIZES or grade not in CLASSES or category not in CATEGORIES:
         raise DataNotFoundError(
             f"bolts: {name!r} is not on offer; sizes are {', '.join(SIZES)}, classes"
             f" {', '.join(CLASSES)}, categories {', '.join(CATEGORIES)}."
-            + did_you_mean(f"{size} {grade}/{category}", names)
+            + did_you_mean(f"{size} {grade}/{category}", _names())
         )
     if grade == "4.6" and category != "S":
         raise InputError(f"bolts: got {name!r}; class 4.6 is snug tight only, '{size} 4.6/S'")

@@ -23,6 +23,7 @@ pytest.importorskip("pypandoc")
 
 HOSTILE = 'A # $x$ \\foo [b] "q" <script>alert(1)</script> *c* _i_ @ref `d` #panic("no") // end'
 MM = 72 / 25.4
+LEFT, RIGHT = 23, 17  # margins in mm
 
 
 def pdf_of(make, *cells, folder=None, name="canopy", paper=None):
@@ -349,8 +350,8 @@ def test_nothing_leaves_the_margins_however_long_it_is(make, tmp_path, paper, wi
     outside = [
         word
         for left, top, right, bottom, word in found
-        if float(left) < 25 * MM - 0.5
-        or float(right) > (width - 20) * MM + 0.5
+        if float(left) < LEFT * MM - 0.5
+        or float(right) > (width - RIGHT) * MM + 0.5
         or float(top) < 10 * MM
         or float(bottom) > height - 10 * MM
     ]
