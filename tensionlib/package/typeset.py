@@ -31,6 +31,7 @@ from tensionlib.package.document import (
     picture,
 )
 from tensionlib.package.markup import TEMPLATES, Converted, Formulas, convert
+from tensionlib.package.reach import reach
 
 PAPERS = {"A4": "a4", "Letter": "us-letter"}
 # A PDF for keeping must say when it was made. Without a date of the project's own it says this
@@ -146,6 +147,7 @@ def _data(document: Document, paper: str | None, pieces: _Pieces) -> dict[str, A
             "foot": _short(", ".join(filter(None, (project["client"], project["site"]))), 90),
         },
         "math": maths,
+        "reach": [round(reach(text), 2) for text in maths],
         "blocks": blocks,
         "calculations": calculations,
         "doubled": _doubled(list(calculated.values())),
@@ -235,7 +237,7 @@ def _calculation(calculated: Calculated, pieces: _Pieces) -> dict[str, Any]:
                 ),
                 "title": _line(sketch.get("title")),
                 "alt": _line(sketch.get("alt")) or "sketch",
-                "upright": _upright(svg),
+                "shape": _shape(svg),
             }
         )
     return {
@@ -305,11 +307,12 @@ def _force(record: Record) -> str:
     return _line(found[1]) if found else ""
 
 
-def _upright(svg: str) -> bool:
+def _shape(svg: str) -> float:
+    """Height over width of a sketch, as its view box states it; 0.5 where it states none."""
     box = re.search(
         r"""viewBox\s*=\s*["']\s*[-\d.]+[\s,]+[-\d.]+[\s,]+([\d.]+)[\s,]+([\d.]+)""", svg
     )
-    return box is not None and float(box[2]) >= 0.8 * float(box[1])
+    return float(box[2]) / float(box[1]) if box and float(box[1]) > 0 else 0.5
 
 
 def _notation(calculated: Sequence[Calculated], formulas: Formulas) -> list[dict[str, Any]]:
