@@ -5,20 +5,16 @@ from __future__ import annotations
 from decimal import Decimal
 
 
-def half_unit(printed: str, figures: int | None = None) -> float:
-    """Half a unit of the last figure of `printed`.
+def agrees(value: float, printed: str, *, figures: int | None = None, units: float = 0.5) -> bool:
+    """Whether `value` rounds to `printed`; a tie may have gone either way.
 
-    `figures` says how many figures count where zeros end a whole number: "20100" to three
-    figures is known to 50.
+    The last figure is the last one behind a decimal point, or else the last that is not a zero:
+    "20100" is known to 50. `figures` says how many count where that is not so, and `units` widens
+    or narrows the half unit, with the reason beside the call.
     """
     number = Decimal(printed)
-    last = number.as_tuple().exponent
-    assert isinstance(last, int)
+    exponent = (number if "." in printed else number.normalize()).as_tuple().exponent
+    assert isinstance(exponent, int)
     if figures is not None:
-        last = max(last, number.adjusted() - figures + 1)
-    return float(Decimal(5).scaleb(last - 1))
-
-
-def agrees(value: float, printed: str, figures: int | None = None) -> bool:
-    """Whether `value` rounds to `printed`; a tie may have gone either way."""
-    return abs(value - float(printed)) <= half_unit(printed, figures) * (1.0 + 1e-9)
+        exponent = number.adjusted() - figures + 1
+    return abs(value - float(printed)) <= units * 10.0**exponent * (1.0 + 1e-9)
