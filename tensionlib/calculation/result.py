@@ -57,8 +57,8 @@ class Check:
 
     def __repr__(self) -> str:
         return (
-            f"<check {self.part}, {self.name} ({self.clause}): {self.demand} on {self.capacity},"
-            f" utilisation {format_utilisation(self.utilisation)}, {self.verdict}>"
+            f"{self.part}, {self.name} ({self.clause}): {self.demand} on {self.capacity},"
+            f" utilisation {format_utilisation(self.utilisation)}, {self.verdict}"
         )
 
 
@@ -295,7 +295,7 @@ class Calculation:
         return bundle.of(self)
 
     def __repr__(self) -> str:
-        return f"<calculation {self.headline}>"
+        return self.headline
 
     # Helpers ------------------------------------------------------------------------------
 
