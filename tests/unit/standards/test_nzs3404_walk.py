@@ -72,8 +72,7 @@ def test_unequal_angle_by_its_short_leg():
         calc,
         {
             ("Member", "gross section yield"): 0.9 * A_g * 320,
-            ("Net section", "net section rupture"): 0.9
-            * (0.85 * 0.75 * (A_g - 22 * 9.5) * 440),
+            ("Net section", "net section rupture"): 0.9 * (0.85 * 0.75 * (A_g - 22 * 9.5) * 440),
             ("Bolts", "bolt shear"): 0.8 * 4 * 0.62 * 830 * 314,
             ("Member at the bolts", "ply bearing and tear-out"): 0.9 * 4 * 39 * 9.5 * 440,
             ("Member at the bolts", "block shear, line to edge"): block(
