@@ -33,9 +33,12 @@ def _choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
 class _Stated:
     """Passes the fields of a frozen dataclass through the door."""
 
-    def _length(self, name: str, *, at_least: float | None = None, example: str = "") -> None:
+    def _length(
+        self, name: str, *, example: str, at_least: float | None = None, due: bool = False
+    ) -> None:
+        """Take a field as a length; None is accepted unless it is `due`."""
         value = getattr(self, name)
-        if value is None:
+        if value is None and not due:
             return
         above = 0.0 if at_least is None else None
         quantity = door(
@@ -90,7 +93,7 @@ class Gusset(_Stated):
     width: Length | None = None
 
     def __post_init__(self) -> None:
-        self._length("thickness", example="12 mm")
+        self._length("thickness", example="12 mm", due=True)
         self._length("width", example="260 mm")
         if not isinstance(self.steel, str):
             raise InputError(
@@ -180,11 +183,11 @@ class Bolted(_Stated):
             ("pitch", "70 mm"),
             ("gauge", "55 mm"),
             ("line_spacing", "60 mm"),
-            ("end_distance", "35 mm"),
             ("plate_end_distance", "35 mm"),
             ("plate_edge_distance", "50 mm"),
         ):
             self._length(name, example=example)
+        self._length("end_distance", example="35 mm", due=True)
         self._length("stagger", at_least=0.0, example="35 mm")
         self._length("clearance", at_least=0.0, example="2 mm")
         if self.per_line > 1 and self.pitch is None:
@@ -259,8 +262,8 @@ class Welded(_Stated):
                 f"plate: got {self.plate!r}; a Gusset is due, for example"
                 " Gusset('12 mm', 'AS/NZS 3678 250')"
             )
-        self._length("leg_size", example="6 mm")
-        self._length("length_1", example="120 mm")
+        self._length("leg_size", example="6 mm", due=True)
+        self._length("length_1", example="120 mm", due=True)
         if self.length_2 is None:
             object.__setattr__(self, "length_2", self.length_1)
         self._length("length_2", example="120 mm")

@@ -65,6 +65,8 @@ def design(
     """
     if not isinstance(member, Member):
         raise InputError(f"member: got {member!r}; a Member(...) is due")
+    if not isinstance(view, View):
+        raise InputError(f"view: got {view!r}; give METRIC, US or METRIC.but(length='m')")
     chosen = find_standard(standard)
     holes = _fitting_holes(member, chosen)
     two = len(member.ends) == 2

@@ -130,7 +130,9 @@ def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
     if end.per_line > 1 and pitch is not None and pitch <= hole:
         refuse("pitch", "the holes would overlap", hole)
     if end.lines == 2 and spacing is not None:
-        step = min(stagger, (pitch or stagger) - stagger) if stagger else 0.0
+        # Along the force, a bolt of the second line stands between two of the first.
+        between = stagger if end.per_line == 1 or pitch is None else pitch - stagger
+        step = min(stagger, between)
         if step < 0.0:
             refuse("stagger", "it is at most the pitch")
         if (step * step + spacing * spacing) ** 0.5 <= hole:

@@ -55,7 +55,10 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
     }
     if end.k_te is not None:
         common["k_te"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
-    choices = {"label": label, "kind": end.kind, "to": end.to, "shape": section.shape}
+    # Either leg of an equal angle is the same leg.
+    equal = section.shape == "angle" and section.dims["b1"] == section.dims["b2"]
+    to = "leg" if equal else end.to
+    choices = {"label": label, "kind": end.kind, "to": to, "shape": section.shape}
     plate_steel = grade(end.plate.steel)
     plate_steel.suits("plate")
     tables = _tables(plate_steel, "f_yp", "f_up")

@@ -117,6 +117,10 @@ def _data(document: Document, paper: str | None, pieces: _Pieces) -> dict[str, A
         pieces.markup.append((f"cell {block.cell}", "prose", one.markup))
     by_block = {id(block): one for block, one in zip(prose, converted, strict=True)}
     blocks = _blocks(document, by_block, rows, places, pieces)
+    standards = [
+        _line((one.record.get("standard") or {}).get("name")) for one in calculated.values()
+    ]
+    project["standard"] = project["standard"] or "; ".join(dict.fromkeys(filter(None, standards)))
     title = project["title"] or _first_heading(converted) or document.name
     draft = project["status"].lower() != "issued"
     attachments = []
@@ -203,7 +207,9 @@ def _project(record: Record) -> dict[str, Any]:
         {key: _line(row.get(key)) for key in keys} for row in record.get("revisions") or []
     ]
     present = {key: project.get(key, "") for key in keys}
-    project["revisions"] = revisions or [{**present, "description": "this revision"}]
+    if not revisions and (present["revision"] or present["date"]):
+        revisions = [{**present, "description": "this revision"}]
+    project["revisions"] = revisions
     return project
 
 

@@ -1,11 +1,13 @@
 """Steel grades: yield stress and tensile strength by thickness.
 
-All from memory of the product standards; how sure is in `known`.
+All from memory of the product standards; how sure is in `known`. A table whose last band has no
+upper limit in the standard ends at infinity.
 """
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
+from math import inf
 
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
 
@@ -14,6 +16,7 @@ _PLATES = ("plate", "flat")
 _TUBES = ("CHS", "RHS")
 _SURE = "from memory, sure"
 _FAIRLY = "from memory, fairly sure"
+_ROUNDS = "from memory, sure to 50 mm, over it the lower of the values remembered"
 
 
 @dataclass(frozen=True)
@@ -28,13 +31,17 @@ class Strength:
 
 @dataclass(frozen=True)
 class Grade:
-    """A grade of a product standard, with its strengths in rising order of thickness."""
+    """A grade of a product standard, with its strengths in rising order of thickness.
+
+    `rounds` holds the bands by diameter of round bars, where the standard lists them apart.
+    """
 
     name: str
     standard: str
     known: str
     products: tuple[str, ...]
     rows: tuple[Strength, ...]
+    rounds: tuple[Strength, ...] = ()
 
     def f_y(self, t: float) -> float:
         """Yield stress, MPa, at thickness t, mm. Raises InputError beyond the table."""
@@ -45,11 +52,33 @@ class Grade:
         return self._row(t).f_u
 
     def _row(self, t: float) -> Strength:
+        if not t > 0.0:
+            raise InputError(f"thickness: got {t:g} mm; more than zero is due")
         for row in self.rows:
             if t < row.limit or (row.closed and t == row.limit):
                 return row
         raise InputError(
             f"thickness: got {t:g} mm; {self.name} is listed to {self.rows[-1].limit:g} mm"
+        )
+
+    def made_as(self, shape: str) -> Grade:
+        """The grade with the bands that hold for a shape: round bars have bands of their own.
+
+        Raises
+        ------
+        InputError
+            For a shape the product standard is not for, naming grades that suit.
+        """
+        self.suits(shape)
+        if shape != "round" or not self.rounds:
+            return self
+        return replace(
+            self,
+            name=f"{self.name} rounds",
+            known=_ROUNDS,
+            products=("round",),
+            rows=self.rounds,
+            rounds=(),
         )
 
     def suits(self, shape: str) -> None:
@@ -74,9 +103,15 @@ def _grade(
     known: str,
     products: tuple[str, ...],
     *rows: tuple[float, bool, float, float],
+    rounds: tuple[tuple[float, bool, float, float], ...] = (),
 ) -> Grade:
     return Grade(
-        f"{standard} {grade}", standard, known, products, tuple(Strength(*row) for row in rows)
+        f"{standard} {grade}",
+        standard,
+        known,
+        products,
+        tuple(Strength(*row) for row in rows),
+        tuple(Strength(*row) for row in rounds),
     )
 
 
@@ -88,7 +123,8 @@ _ALL = (
         _SECTIONS,
         (11.0, False, 320.0, 440.0),
         (17.0, True, 300.0, 440.0),
-        (100.0, True, 280.0, 440.0),
+        (inf, True, 280.0, 440.0),
+        rounds=((50.0, True, 300.0, 440.0), (inf, True, 280.0, 440.0)),
     ),
     _grade(
         "AS/NZS 3679.1",
@@ -97,7 +133,8 @@ _ALL = (
         _SECTIONS,
         (11.0, False, 360.0, 480.0),
         (40.0, False, 340.0, 480.0),
-        (100.0, True, 330.0, 480.0),
+        (inf, True, 330.0, 480.0),
+        rounds=((50.0, True, 340.0, 480.0), (100.0, False, 330.0, 480.0)),
     ),
     _grade(
         "AS/NZS 3678",
@@ -133,7 +170,7 @@ _ALL = (
         (150.0, True, 330.0, 450.0),
     ),
     *(
-        _grade("AS/NZS 1163", name, _SURE, _TUBES, (100.0, True, f_y, f_u))
+        _grade("AS/NZS 1163", name, _SURE, _TUBES, (inf, True, f_y, f_u))
         for name, f_y, f_u in (
             ("C250", 250.0, 320.0),
             ("C350", 350.0, 430.0),

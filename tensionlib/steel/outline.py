@@ -59,15 +59,9 @@ class Moments:
     I_y: float
     I_xy: float
 
-    def __add__(self, other: Moments) -> Moments:
-        return Moments(*(a + b for a, b in zip(_fields(self), _fields(other), strict=True)))
 
-    def __mul__(self, factor: float) -> Moments:
-        return Moments(*(factor * value for value in _fields(self)))
-
-
-def _fields(m: Moments) -> tuple[float, ...]:
-    return (m.A, m.S_x, m.S_y, m.I_x, m.I_y, m.I_xy)
+# The fields of Moments in order, for one edge or one loop.
+_Parts = tuple[float, float, float, float, float, float]
 
 
 @dataclass(frozen=True, slots=True)
@@ -79,10 +73,11 @@ class Outline:
 
     def moments(self) -> Moments:
         """Area and moments, holes taken off."""
-        total = _moments(self.outer)
+        parts = _parts(self.outer)
         for hole in self.holes:
-            total = total + _moments(hole) * -1.0
-        return total
+            parts += [_times(part, -1.0) for part in _parts(hole)]
+        # fsum rounds once, so the order of the edges does not show in the last digit.
+        return Moments(*map(math.fsum, zip(*parts, strict=True)))
 
 
 @dataclass(frozen=True, slots=True)
@@ -151,25 +146,31 @@ def _unit(x: float, y: float) -> tuple[float, float]:
     return x / length, y / length
 
 
-def _moments(loop: Loop) -> Moments:
+def _parts(loop: Loop) -> list[_Parts]:
+    """What each edge of a loop adds to the moments."""
     if isinstance(loop, Circle):
         A = math.pi * loop.r**2
         own = A * loop.r**2 / 4
         cx, cy = loop.cx, loop.cy
-        return Moments(A, A * cy, A * cx, own + A * cy**2, own + A * cx**2, A * cx * cy)
-    total = Moments(0.0, 0.0, 0.0, 0.0, 0.0, 0.0)
+        return [(A, A * cy, A * cx, own + A * cy**2, own + A * cx**2, A * cx * cy)]
+    parts = []
     for edge in edges(loop):
         if isinstance(edge, Arc):
-            total = total + _chord(edge.x1, edge.y1, edge.x2, edge.y2) + _segment(edge)
+            parts += [_chord(edge.x1, edge.y1, edge.x2, edge.y2), _segment(edge)]
         else:
-            total = total + _chord(*edge)
-    return total
+            parts.append(_chord(*edge))
+    return parts
 
 
-def _chord(x1: float, y1: float, x2: float, y2: float) -> Moments:
+def _times(parts: _Parts, factor: float) -> _Parts:
+    A, S_x, S_y, I_x, I_y, I_xy = parts
+    return (factor * A, factor * S_x, factor * S_y, factor * I_x, factor * I_y, factor * I_xy)
+
+
+def _chord(x1: float, y1: float, x2: float, y2: float) -> _Parts:
     """What a straight edge adds: the triangle it spans with the origin, signed."""
     cross = x1 * y2 - x2 * y1
-    return Moments(
+    return (
         cross / 2,
         cross * (y1 + y2) / 6,
         cross * (x1 + x2) / 6,
@@ -179,7 +180,7 @@ def _chord(x1: float, y1: float, x2: float, y2: float) -> Moments:
     )
 
 
-def _segment(arc: Arc) -> Moments:
+def _segment(arc: Arc) -> _Parts:
     """What an arc adds over its chord: the circular segment, signed by the turn."""
     half, r = abs(arc.sweep) / 2, arc.r
     s, c = math.sin(half), math.cos(half)
@@ -193,7 +194,7 @@ def _segment(arc: Arc) -> Moments:
     product = (along - across) * ux * uy
     qx, qy = first * ux, first * uy
     cx, cy = arc.cx, arc.cy
-    moments = Moments(
+    parts = (
         A,
         qy + A * cy,
         qx + A * cx,
@@ -201,4 +202,4 @@ def _segment(arc: Arc) -> Moments:
         about_y + 2 * cx * qx + A * cx**2,
         product + cx * qy + cy * qx + A * cx * cy,
     )
-    return moments * math.copysign(1.0, arc.sweep)
+    return _times(parts, math.copysign(1.0, arc.sweep))

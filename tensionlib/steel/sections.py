@@ -12,13 +12,13 @@ import re
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from decimal import ROUND_HALF_UP, Decimal
-from functools import cache
+from functools import cache, cached_property
 from importlib.resources import files
 from types import MappingProxyType
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, Any
 
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
-from tensionlib.quantities import AREA, LENGTH, MASS_PER_LENGTH, Quantity, door
+from tensionlib.quantities import AREA, LENGTH, MASS_PER_LENGTH, Quantity, Role, door
 from tensionlib.steel import shapes
 from tensionlib.steel.outline import Outline, Properties
 
@@ -86,6 +86,13 @@ class Section:
 
     def __hash__(self) -> int:
         return hash((self.designation, self.shape, self.A, tuple(self.dims.items())))
+
+    # A mapping proxy does not go through pickle; its dict does.
+    def __getstate__(self) -> dict[str, Any]:
+        return self.__dict__ | {"dims": dict(self.dims)}
+
+    def __setstate__(self, state: dict[str, Any]) -> None:
+        self.__dict__.update(state | {"dims": MappingProxyType(state["dims"])})
 
     @property
     def r_x(self) -> float | None:
@@ -169,25 +176,46 @@ class Catalogue:
 
     sections: tuple[Section, ...]
 
-    @property
+    @cached_property
     def designations(self) -> tuple[str, ...]:
         return tuple(s.designation for s in self.sections)
 
+    @cached_property
+    def _rows(self) -> dict[str, int]:
+        return {designation: row for row, designation in enumerate(self.designations)}
+
     def row(self, designation: str) -> int:
-        """Row number of a designation."""
-        return self.designations.index(section(designation).designation)
+        """Row number of a designation. Raises DataNotFoundError for one that is not listed."""
+        row = self._rows.get(section(designation).designation)
+        if row is None:
+            raise DataNotFoundError(
+                f"designation: {designation!r} is a pair, which is not a row of the catalogue"
+            )
+        return row
 
     def column(self, name: str) -> npt.NDArray[np.float64]:
-        """A property or dimension of every row, shape (rows,); NaN where a row has none."""
+        """A property or dimension of every row, shape (rows,); NaN where a row has none.
+
+        Raises
+        ------
+        DataNotFoundError
+            For a name that is neither, with the nearest names.
+        """
         import numpy as np
 
-        return np.array(
-            [
-                getattr(s, name, None) if hasattr(s, name) else s.dims.get(name)
-                for s in self.sections
-            ],
-            dtype=float,
+        if name in _PROPERTIES:
+            return np.array([getattr(s, name) for s in self.sections], dtype=float)
+        if name in _DIMENSIONS:
+            return np.array([s.dims.get(name) for s in self.sections], dtype=float)
+        known = (*_PROPERTIES, *_DIMENSIONS)
+        raise DataNotFoundError(
+            f"column: {name!r} is not listed; there are {', '.join(known)}."
+            + did_you_mean(str(name), known)
         )
+
+
+_PROPERTIES = ("A", "mass", "x_c", "y_c", "I_x", "I_y", "r_x", "r_y", "r_min")
+_DIMENSIONS = tuple(dict.fromkeys(n for names in shapes.DIMENSIONS.values() for n in names))
 
 
 @cache
@@ -217,7 +245,10 @@ def _family(family: str) -> tuple[Section, ...]:
 
 
 def _tee_from(family: str, parent: Section) -> Section:
-    """Half of a beam or column, the saw cut neglected."""
+    """Half of a beam or column, the saw cut neglected.
+
+    Its designation carries half of the parent's mass: a printed list may differ in the last figure.
+    """
     nominal, _, mass = parent.designation.split()
     half = Decimal(mass) / 2
     dims = {**parent.dims, "d": parent.dims["d"] / 2}
@@ -241,11 +272,28 @@ def _by_designation(family: str) -> dict[str, Section]:
     return {_folded(s.designation): s for s in _family(family)}
 
 
-_PAIR = re.compile(
-    r"2\s*/\s*(?P<single>[^,]+?)\s*"
-    r"(?:,\s*(?P<facing>long legs|short legs|legs|webs)\s*)?,\s*gap\s+(?P<gap>.+)",
-    re.IGNORECASE,
-)
+_PAIR = re.compile(r"2\s*/(.+)", re.DOTALL)
+_FACING = {"long legs": "long leg", "short legs": "short leg", "legs": "long leg", "webs": "web"}
+
+_PAIR_FORMS = " write it as '2/125x75x10 UA, long legs, gap 12 mm' or '2/150 PFC, webs, gap 16 mm'"
+
+
+def _pair(name: str, written: str) -> Section:
+    """The pair that `name` means, `written` what stands after its "2/"."""
+    single, *rest = (part.strip() for part in written.split(","))
+    one = section(single)
+    gap, facing = "", "web" if one.shape == "channel" else "long leg"
+    for part in rest:
+        words = " ".join(part.lower().removesuffix("back to back").split())
+        if words.startswith("gap "):
+            gap = part[len("gap ") :]
+        elif words in _FACING:
+            facing = _FACING[words]
+        else:
+            raise InputError(f"section: {part!r} in {name!r} says nothing of a pair;{_PAIR_FORMS}")
+    if not gap:
+        raise InputError(f"section: {name!r} states no gap;{_PAIR_FORMS}")
+    return double(one, gap, facing)
 
 
 def section(name: str) -> Section:
@@ -253,7 +301,8 @@ def section(name: str) -> Section:
 
     "125x75x10 UA", "100x100x8 EA", "150 PFC", "310 UB 40.4", "155 BT 20.2", "100x12 FL", "30 RB",
     "114.3x4.8 CHS", "150x100x6.0 RHS". A pair is "2/125x75x10 UA, long legs, gap 12 mm" or
-    "2/150 PFC, webs, gap 16 mm".
+    "2/150 PFC, webs, gap 16 mm", in either order and with "back to back" or without; angles face
+    each other by their long legs unless "short legs" is written.
 
     Raises
     ------
@@ -264,12 +313,7 @@ def section(name: str) -> Section:
         raise InputError(f"section: got {name!r}; a designation is due, for example '125x75x10 UA'")
     pair = _PAIR.fullmatch(name.strip())
     if pair:
-        single = section(pair["single"])
-        words = (pair["facing"] or "").lower()
-        facing = {"long legs": "long leg", "short legs": "short leg", "webs": "web"}.get(
-            words, "web" if single.shape == "channel" else "long leg"
-        )
-        return double(single, pair["gap"], facing)
+        return _pair(name, pair[1])
     folded = _folded(name)
     # The family is in the name, so that one look-up reads one family's table.
     family = "".join(c for c in folded if c.isalpha() and c != "X")
@@ -315,8 +359,8 @@ def find(
             + did_you_mean(str(family), FAMILIES)
         )
 
-    def limit(name: str, value: Quantity | str | None, role: object) -> float | None:
-        return None if value is None else door(name, value, role, above=0.0).internal  # type: ignore[arg-type]
+    def limit(name: str, value: Quantity | str | None, role: Role) -> float | None:
+        return None if value is None else door(name, value, role, above=0.0).internal
 
     area = limit("A_min", A_min, AREA)
     wanted_leg = limit("leg", leg, LENGTH)

@@ -17,7 +17,8 @@ class WeldMetal:
 
 
 _OLD = "NZS 3404:1997, from memory, sure"
-_NEW = "AS/NZS 4855, from memory, fairly sure"
+# Not in NZS 3404:1997, whose table has the two above; the cousin AS 4100 took them up in 2012.
+_NEW = "AS/NZS 4855 classes as in AS 4100:1998 with Amendment 1:2012, from memory, fairly sure"
 
 METALS: dict[str, WeldMetal] = {
     metal.name: metal

@@ -40,8 +40,9 @@ def of(record: Record) -> str:
 
 
 def maths(latex: str) -> str:
-    """LaTeX set inline; the HTML's own special characters escaped."""
-    return f'<span class="tl-maths">${escape(latex, quote=False)}$</span>'
+    """LaTeX set inline, fractions at full size; the HTML's own special characters escaped."""
+    size = r"\displaystyle " if r"\frac" in latex else ""
+    return f'<span class="tl-maths">${size}{escape(latex, quote=False)}$</span>'
 
 
 def _words(words: str, kind: str = "tl-words") -> str:
@@ -50,17 +51,14 @@ def _words(words: str, kind: str = "tl-words") -> str:
 
 
 def _headline(record: Record) -> str:
-    word = record["verdict"]["word"]
-    kind = {"PASS": "tl-pass", "FAIL": "tl-fail"}.get(word, "tl-open")
-    title = f" – {record['title']}" if record["title"] else ""
+    word, mark, title = record["verdict"]["word"], record["mark"], record["title"]
+    kind = {"": "", "PASS": "tl-pass", "FAIL": "tl-fail"}.get(word, "tl-open")
+    says = record["headline"].removeprefix(mark).removeprefix(": ")
+    standard = record["standard"]["name"]
     return (
-        f'<p class="tl-headline {kind if word else ""}"><strong>{_words(record["mark"] + title)}'
-        f"</strong><br>{_words(record['headline'])}</p>"
-        + (
-            f'<p class="tl-standard">{_words(record["standard"]["name"])}</p>'
-            if record["standard"]["name"]
-            else ""
-        )
+        f'<p class="tl-headline {kind}"><strong>{_words(f"{mark}, {title}" if title else mark)}'
+        f"</strong><br>{_words(says)}</p>"
+        + (f'<p class="tl-standard">{_words(standard)}</p>' if standard else "")
     )
 
 
@@ -78,10 +76,16 @@ def _fold(title: str, content: str, *, open_: bool) -> str:
     )
 
 
-def _table(head: list[str], rows: list[list[str]], kind: str) -> str:
-    heads = "".join(f"<th>{escape(cell)}</th>" for cell in head)
-    body = "".join("<tr>" + "".join(f"<td>{c}</td>" for c in row) + "</tr>" for row in rows)
-    return f'<table class="{kind}"><thead><tr>{heads}</tr></thead><tbody>{body}</tbody></table>'
+def _table(kind: str, head: list[str], rows: list[list[str]], numbers: range) -> str:
+    """A table; the columns of `numbers` stand to the right."""
+    right = [' class="tl-number"' if i in numbers else "" for i in range(len(head))]
+
+    def row(tag: str, cells: list[str]) -> str:
+        inside = zip(right, cells, strict=True)
+        return "<tr>" + "".join(f"<{tag}{to}>{cell}</{tag}>" for to, cell in inside) + "</tr>"
+
+    body = "".join(row("td", cells) for cells in rows)
+    return f'<table class="{kind}"><thead>{row("th", head)}</thead><tbody>{body}</tbody></table>'
 
 
 def _inputs(record: Record) -> str:
@@ -89,11 +93,12 @@ def _inputs(record: Record) -> str:
         [
             maths(f"{entry['latex']} = {entry['latex_value']}"),
             _words(entry["meaning"]),
+            _words(entry["part"]),
             _words(entry["origin"]),
         ]
         for entry in record["inputs"]
     ]
-    return _table(["Input", "Meaning", "From"], rows, "tl-inputs")
+    return _table("tl-inputs", ["Input", "Meaning", "Part", "From"], rows, range(0))
 
 
 def _lines(part: Record) -> str:
@@ -103,27 +108,28 @@ def _lines(part: Record) -> str:
 def _line(line: Record) -> str:
     clause = _words(line["clause"], "tl-clause")
     if line["kind"] == "note":
-        content = _words(line["title"])
-    elif line["kind"] == "not covered":
-        content = f"<strong>Not covered: {_words(line['title'])}.</strong> {_words(line['note'])}"
-    else:
-        content = _words(line["title"], "tl-what") + _steps(line)
-        if line["kind"] == "check":
-            content += _words(
-                f" utilisation {line['utilisation_text']}: {line['verdict']}", "tl-verdict"
-            )
-        if line["note"]:
-            content += _words(line["note"], "tl-note")
-    return f'<div class="tl-line"><div>{content}</div>{clause}</div>'
+        return f'<div class="tl-line">{_words(line["title"], "tl-alone")}{clause}</div>'
+    if line["kind"] == "not covered":
+        words = f"<strong>Not covered: {_words(line['title'])}.</strong> {_words(line['note'])}"
+        return f'<div class="tl-line"><span class="tl-alone">{words}</span>{clause}</div>'
+    work, kind = _steps(line), "tl-line"
+    if line["kind"] == "check":
+        kind = "tl-line tl-check"
+        verdict = f"utilisation {line['utilisation_text']}: {line['verdict']}"
+        work += " " + _words(verdict, "tl-verdict")
+    note = _words(line["note"], "tl-note") if line["note"] else ""
+    return (
+        f'<div class="{kind}">{_words(line["title"], "tl-what")}<div class="tl-work">'
+        f'<div class="tl-steps">{work}</div>{note}</div>{clause}</div>'
+    )
 
 
 def _steps(line: Record) -> str:
-    steps = line["steps"]
+    first, *others = line["steps"]
     if not line["latex"]:
-        return '<div class="tl-steps">' + "<span>; </span>".join(map(maths, steps)) + "</div>"
-    first, *others = steps
+        return "; ".join(map(maths, line["steps"]))
     spans = [maths(f"{line['latex']} = {first}"), *(maths(f"= {step}") for step in others)]
-    return '<div class="tl-steps">' + " ".join(spans) + "</div>"
+    return " ".join(spans)
 
 
 def _checks(record: Record) -> str:
@@ -142,7 +148,7 @@ def _checks(record: Record) -> str:
         for check in record["checks"]
     ]
     head = ["Part", "Check", "Clause", "Demand", "Capacity", "Utilisation", "Verdict"]
-    return _table(head, rows, "tl-checks")
+    return _table("tl-checks", head, rows, range(3, 6))
 
 
 def _bullets(title: str, texts: list[str]) -> str:

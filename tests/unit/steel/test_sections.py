@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+import pickle
 
 import numpy as np
 import pytest
@@ -28,7 +29,7 @@ def test_every_family_has_rows():
         assert len(_family(family)) >= 9, family
     designations = [s.designation for s in ALL]
     assert len(set(designations)) == len(designations)
-    assert len(ALL) > 200
+    assert len(ALL) > 280
 
 
 def _compared(row):
@@ -111,6 +112,12 @@ def test_moving_the_outline_moves_only_its_centroid():
         ("155BT20.2", "155 BT 20.2"),
         ("2/125x75x10 UA, long legs, gap 12 mm", "2/125x75x10 UA, long legs, gap 12 mm"),
         ("2/150 PFC, gap 16 mm", "2/150 PFC, webs, gap 16 mm"),
+        ("2 / 150 pfc, gap 1.6 cm, Webs", "2/150 PFC, webs, gap 16 mm"),
+        (
+            "2/125 x 75 x 10 UA, short legs back to back, gap 12 mm",
+            "2/125x75x10 UA, short legs, gap 12 mm",
+        ),
+        ("2/100x100x8 EA, legs, gap 10 mm", "2/100x100x8 EA, long legs, gap 10 mm"),
     ],
 )
 def test_designations_are_read_tolerantly(written, meant):
@@ -128,6 +135,32 @@ def test_designations_are_read_tolerantly(written, meant):
 def test_unknown_designations_name_the_nearest(name, says):
     with pytest.raises(DataNotFoundError, match=says):
         section(name)
+
+
+@pytest.mark.parametrize(
+    ("name", "says"),
+    [
+        ("2/125x75x10 UA", "states no gap; write it as '2/125x75x10 UA, long legs, gap 12 mm'"),
+        ("2/125x75x10 UA, toes, gap 12 mm", "'toes' in .* says nothing of a pair; write it as"),
+        ("2/150 PFC, legs, gap 12 mm", "facing: got 'long leg'; 150 PFC makes pairs by its web"),
+        ("2/125x75x10 UA, webs, gap 12 mm", "facing: got 'web'; .* by its long leg, short leg"),
+        ("2/310 UB 40.4, gap 12 mm", "single: 310 UB 40.4 makes no pairs"),
+        ("2/125x75x10 UA, long legs, gap 12", "gap: got '12', a number without a unit"),
+    ],
+)
+def test_pairs_that_cannot_be_read_say_how_to_write_them(name, says):
+    with pytest.raises((InputError, UnitError), match=says):
+        section(name)
+
+
+@pytest.mark.parametrize(
+    "one", [section("150 PFC"), section("2/150 PFC, webs, gap 16 mm")], ids=lambda s: s.designation
+)
+def test_sections_go_through_pickle(one):
+    again = pickle.loads(pickle.dumps(one))
+    assert (again, hash(again)) == (one, hash(one))
+    with pytest.raises(TypeError, match="does not support item assignment"):
+        again.dims["d"] = 1.0
 
 
 def test_find_is_least_mass_first_and_meets_every_wish():
@@ -152,6 +185,13 @@ def test_catalogue_columns_are_arrays_in_row_order():
     row = columns.row("125x75x10 UA")
     assert area[row] == section("125x75x10 UA").A
     assert np.isnan(columns.column("b1")[columns.row("150 PFC")])
+    assert [columns.row(s) for s in columns.designations] == list(range(len(ALL)))
+    assert columns.column("r_min")[row] == section("125x75x10 UA").r_min
+    for name in ("A_g", "family", "designation", "outline"):
+        with pytest.raises(DataNotFoundError, match=f"column: '{name}' is not listed; there are A"):
+            columns.column(name)
+    with pytest.raises(DataNotFoundError, match="is a pair"):
+        columns.row("2/150 PFC, webs, gap 16 mm")
 
 
 def test_pair_by_the_parallel_axis_rule():
