@@ -128,8 +128,26 @@ def _steps(line: Record) -> str:
     first, *others = line["steps"]
     if not line["latex"]:
         return "; ".join(map(maths, line["steps"]))
-    spans = [maths(f"{line['latex']} = {first}"), *(maths(f"= {step}") for step in others)]
-    return " ".join(spans)
+    steps = [f"{line['latex']} = {first}", *(f"= {step}" for step in others)]
+    return " ".join(maths(term) for step in steps for term in _terms(step))
+
+
+def _terms(latex: str) -> list[str]:
+    """A step cut before each outer + and -, where a long one may go on to the next line."""
+    if " + " not in latex and " - " not in latex:
+        return [latex]
+    terms, start, depth = [], 0, 0
+    for at, sign in enumerate(latex):
+        if sign in "({":
+            depth += 1
+        elif sign in ")}":
+            depth -= 1
+        elif depth == 0 and latex[at : at + 3] in (" + ", " - "):
+            terms.append(latex[start:at])
+            start = at + 1
+    # A sign that opens a term is set without the space of a sum.
+    first, *rest = [*terms, latex[start:]]
+    return [first, *(rf"{term[0]}\:{term[1:]}" for term in rest)]
 
 
 def _checks(record: Record) -> str:

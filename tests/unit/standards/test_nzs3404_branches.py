@@ -104,6 +104,15 @@ def test_one_row_across_the_force():
     assert calc["Gusset", "yield"].capacity.internal == pytest.approx(0.9 * 70 * 12 * 260)
 
 
+def test_one_row_through_both_flanges_has_no_length_to_cover_the_depth():
+    end = two_lines(to="both flanges", line_spacing="90 mm", per_line=1, pitch=None)
+    calc = tl.design(member("150 UC 30.0", end), "50 kN")
+    assert [(line.title, line.clause) for line in calc.not_covered] == [
+        ("net section rupture", "7.3.2")
+    ]
+    assert not calc.passes
+
+
 def test_a_narrow_gusset_clips_the_spread():
     narrow = tl.design(member(end=bolted(plate=gusset(width="100 mm"))), "50 kN")
     assert narrow["Gusset", "yield"].capacity.internal == pytest.approx(0.9 * 100 * 12 * 260)

@@ -131,7 +131,7 @@ def test_core_areas_not_remembered_are_computed_and_say_so():
 def test_tensile_stress_area_is_that_of_the_thread(size):
     """ISO 898-1: the mean of pitch diameter and root diameter; the listed areas have 3 figures."""
     mean = size.d_f - 0.9382 * size.pitch
-    assert size.A_s == pytest.approx(3.14159265 / 4 * mean**2, rel=2e-3)
+    assert size.A_s == pytest.approx(3.14159265 / 4 * mean**2, rel=3e-3)
 
 
 @pytest.mark.parametrize("size", SIZES.values(), ids=lambda s: s.name)
