@@ -67,6 +67,8 @@ def design(
         raise InputError(f"member: got {member!r}; a Member(...) is due")
     if not isinstance(view, View):
         raise InputError(f"view: got {view!r}; give METRIC, US or METRIC.but(length='m')")
+    if not isinstance(origin, str):
+        raise InputError(f"origin: got {origin!r}; say in words where the force comes from")
     chosen = find_standard(standard)
     holes = _fitting_holes(member, chosen)
     two = len(member.ends) == 2

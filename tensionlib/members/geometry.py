@@ -9,6 +9,7 @@ from tensionlib.joints.ends import Bolted, End
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section
 
+_LOOSE = 1.0  # mm a gap may be wider than its gusset; common practice, no source
 _LEGS = ("long leg", "short leg", "leg")
 
 # Elements of each shape that an end may take hold of, by kind of end.
@@ -79,12 +80,7 @@ def seat(section: Section, end: End) -> Seat:
             f"to: got {end.to!r}; the two parts of {section.designation} face the gusset by their"
             f" {section.facing}"
         )
-    gap = section.dims.get("gap")
-    if gap is not None and end.plate.thickness.internal > gap:  # type: ignore[union-attr]
-        raise InputError(
-            f"plate.thickness: {end.plate.thickness} does not go into the gap of"
-            f" {section.designation}"
-        )
+    _check_gap(section, end)
     element = {"both flanges": "flange", "slot": "wall", "bar": "plate"}.get(end.to, end.to)
     double = section.shape.startswith("double")
     both = end.to == "both flanges"
@@ -98,6 +94,17 @@ def seat(section: Section, end: End) -> Seat:
         lines_from="heel" if end.to in _LEGS or (both and section.shape == "channel") else "middle",
         free_edge=end.to != "web",
     )
+
+
+def _check_gap(section: Section, end: End) -> None:
+    """A pair's gap is the gusset's thickness: no less, and no packing plates."""
+    gap = section.dims.get("gap")
+    plate = float(end.plate.thickness.internal)  # type: ignore[union-attr]
+    if gap is not None and not plate <= gap <= plate + _LOOSE:
+        raise InputError(
+            f"plate.thickness: got {plate:g} mm in the gap of {section.designation}; a gusset as"
+            f" thick as the gap (to {_LOOSE:g} mm) is accepted, packing plates are not covered"
+        )
 
 
 def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
@@ -141,7 +148,7 @@ def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
     if place.lines_from == "heel":
         gauge = length("gauge")
         if gauge is None:
-            refuse("gauge", "missing: bolts through a channel's flanges are set out from its back")
+            refuse("gauge", "bolts through a channel's flanges are set out from its back")
             return
         if gauge - radius <= section.thickness(_other(section, place)):
             refuse(

@@ -19,8 +19,8 @@ _COUNTED = "from the connection"
 
 def member_inputs(member: Member) -> Inputs:
     """Numbers, choices and tables of the member itself."""
-    section, steel = member.profile, member.material
-    steel.suits(section.shape)
+    section = member.profile
+    steel = member.material.made_as(section.shape)
     source = section.source
     numbers = {
         "A_g": Number(section.A, source),
@@ -31,7 +31,9 @@ def member_inputs(member: Member) -> Inputs:
         numbers["r_min"] = Number(section.r_min, source)
     if "d" in section.dims:
         numbers["d"] = Number(section.dims["d"], source)
-    return Inputs({"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u"), "member: ")
+    return Inputs(
+        {"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u", "the section"), "member: "
+    )
 
 
 def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
@@ -59,9 +61,9 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
     equal = section.shape == "angle" and section.dims["b1"] == section.dims["b2"]
     to = "leg" if equal else end.to
     choices = {"label": label, "kind": end.kind, "to": to, "shape": section.shape}
-    plate_steel = grade(end.plate.steel)
-    plate_steel.suits("plate")
-    tables = _tables(plate_steel, "f_yp", "f_up")
+    plate_steel = grade(end.plate.steel, "plate.steel")
+    plate_steel.suits("plate", "plate.steel")
+    tables = _tables(plate_steel, "f_yp", "f_up", "the gusset")
     if isinstance(end, Bolted):
         more, also = _bolted(end, place)
     else:
@@ -95,17 +97,17 @@ def _plate(plate: Gusset) -> dict[str, Number]:
 
 
 @cache
-def _table(steel: Grade, strength: str) -> ThresholdTable:
+def _table(steel: Grade, strength: str, of: str) -> ThresholdTable:
     bands = tuple(
         Band(row.limit, row.closed, row.f_y if strength == "f_y" else row.f_u) for row in steel.rows
     )
-    return ThresholdTable(f"{strength} by thickness", steel.known, {steel.name: bands})
+    return ThresholdTable(f"{strength} by the thickness of {of}", steel.known, {steel.name: bands})
 
 
-def _tables(steel: Grade, f_y: str, f_u: str) -> dict[str, tuple[ThresholdTable, str]]:
+def _tables(steel: Grade, f_y: str, f_u: str, of: str) -> dict[str, tuple[ThresholdTable, str]]:
     return {
-        f_y: (_table(steel, "f_y"), steel.name),
-        f_u: (_table(steel, "f_u"), steel.name),
+        f_y: (_table(steel, "f_y", of), steel.name),
+        f_u: (_table(steel, "f_u", of), steel.name),
     }
 
 

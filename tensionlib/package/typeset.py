@@ -219,9 +219,12 @@ def _calculation(calculated: Calculated, pieces: _Pieces) -> dict[str, Any]:
     def formula(tex: Any) -> int | None:
         return pieces.formulas.index(str(tex), cell) if str(tex or "").strip() else None
 
+    times = Counter(str(row.get("latex")) for row in record["inputs"])
     inputs = [
         {
-            "meaning": _line(row.get("meaning")),
+            "meaning": _line(row.get("meaning"))
+            # A symbol of two ends stands twice, and only its part tells which is which.
+            + (f" ({_line(row.get('part'))})" if times[str(row.get("latex"))] > 1 else ""),
             "symbol": formula(row.get("latex")),
             "text": _line(row.get("text")),
             "origin": _line(row.get("origin")),
@@ -313,12 +316,17 @@ def _force(record: Record) -> str:
     return _line(found[1]) if found else ""
 
 
+_NUMBER = r"(\d+(?:\.\d+)?)"
+_VIEW_BOX = re.compile(
+    rf"""viewBox\s*=\s*["']\s*\S+[\s,]+\S+[\s,]+{_NUMBER}[\s,]+{_NUMBER}\s*["']"""
+)
+
+
 def _shape(svg: str) -> float:
     """Height over width of a sketch, as its view box states it; 0.5 where it states none."""
-    box = re.search(
-        r"""viewBox\s*=\s*["']\s*[-\d.]+[\s,]+[-\d.]+[\s,]+([\d.]+)[\s,]+([\d.]+)""", svg
-    )
-    return float(box[2]) / float(box[1]) if box and float(box[1]) > 0 else 0.5
+    box = _VIEW_BOX.search(svg)
+    width, height = (float(box[1]), float(box[2])) if box else (0.0, 0.0)
+    return height / width if width > 0.0 and height > 0.0 else 0.5
 
 
 def _notation(calculated: Sequence[Calculated], formulas: Formulas) -> list[dict[str, Any]]:

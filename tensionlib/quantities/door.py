@@ -144,7 +144,7 @@ def _due(role: Role, example: str | None) -> str:
 
 def _example(role: Role, example: str | None) -> str:
     if example is not None:
-        return example
+        return example if example.startswith("'") else f"'{example}'"
     if role.is_plain_number:
         return "3" if role.whole else "0.85"
     return _EXAMPLES.get(role.name) or f"'1 {METRIC.unit(role).name}'"

@@ -81,7 +81,7 @@ class Grade:
             rounds=(),
         )
 
-    def suits(self, shape: str) -> None:
+    def suits(self, shape: str, argument: str = "steel") -> None:
         """Refuse a shape the product standard is not for. A stated section takes any grade.
 
         Raises
@@ -92,7 +92,7 @@ class Grade:
         if shape != "stated" and shape not in self.products:
             fitting = [g.name for g in GRADES.values() if shape in g.products]
             raise InputError(
-                f"steel: {self.name} is not made as {shape}; for example"
+                f"{argument}: {self.name} is not made as {shape}; for example"
                 f" {', '.join(map(repr, fitting[:3]))}"
             )
 
@@ -188,7 +188,7 @@ def _folded(name: str) -> str:
 _BY_NAME = {_folded(name): grade for name, grade in GRADES.items()}
 
 
-def grade(name: str) -> Grade:
+def grade(name: str, argument: str = "steel") -> Grade:
     """A grade by its standard and name: "AS/NZS 3679.1 300", "AS/NZS 1163 C350".
 
     Raises
@@ -197,11 +197,11 @@ def grade(name: str) -> Grade:
         For a grade no table holds, with the nearest names.
     """
     if not isinstance(name, str):
-        raise InputError(f"steel: got {name!r}; name a grade, for example 'AS/NZS 3679.1 300'")
+        raise InputError(f"{argument}: got {name!r}; name a grade, for example 'AS/NZS 3679.1 300'")
     found = _BY_NAME.get(_folded(name))
     if found is None:
         raise DataNotFoundError(
-            f"steel: {name!r} is not a grade on offer; there are {', '.join(GRADES)}."
+            f"{argument}: {name!r} is not a grade on offer; there are {', '.join(GRADES)}."
             + did_you_mean(name, GRADES)
         )
     return found

@@ -16,7 +16,7 @@ import pytest
 
 from tensionlib.errors import InputError, TensionlibError
 from tensionlib.package.document import read
-from tensionlib.package.typeset import typeset
+from tensionlib.package.typeset import _shape, typeset
 
 pypdf = pytest.importorskip("pypdf")
 pytest.importorskip("typst")
@@ -156,6 +156,21 @@ def test_a_calculation_prints_each_line_with_its_clause_and_note(package):
     assert "NOT COVERED block shear of a staggered pattern 9.1.9" in text
     assert "this pattern has no rule in the clause" in text
     assert "Not checked here (1) fatigue; (2) corrosion allowance." in text
+
+
+def test_an_input_of_both_ends_says_of_which_end_it_is(make):
+    rows = [
+        {"part": part, "latex": latex, "meaning": meaning, "text": "12 mm", "origin": "given"}
+        for part, latex, meaning in (
+            ("Member", "L", "length"),
+            ("End 1: Gusset", "t_{p}", "thickness"),
+            ("End 2: Gusset", "t_{p}", "thickness"),
+        )
+    ]
+    text = text_of(make, make.code(make.shown(make.calculation(inputs=rows))))
+    assert "thickness (End 1: Gusset)" in text
+    assert "thickness (End 2: Gusset)" in text
+    assert "length (Member)" not in text
 
 
 def test_a_calculation_shown_again_is_referred_to_by_its_page(package):
@@ -361,6 +376,20 @@ def test_nothing_leaves_the_margins_however_long_it_is(make, tmp_path, paper, wi
     assert outside == []
     # Each formula reaches its last term: nothing was cut off on the way.
     assert sum("39.123" in word for *_, word in found) > 20
+
+
+@pytest.mark.parametrize(
+    ("box", "shape"),
+    [
+        ("0 0 160 80.64", 0.504),
+        ("-5,-5, 100,100", 1.0),
+        ("0 0 0 50", 0.5),
+        ("0 0 50 0", 0.5),
+        ("nonsense", 0.5),
+    ],
+)
+def test_the_shape_of_a_sketch_is_that_of_its_view_box(box, shape):
+    assert _shape(f'<svg viewBox="{box}"></svg>') == pytest.approx(shape)
 
 
 # Words stay words -------------------------------------------------------------------------------

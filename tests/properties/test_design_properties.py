@@ -15,18 +15,36 @@ from tests.builders import bolted, gusset, member, welded
 
 usual = settings(derandomize=True, deadline=None, max_examples=40)
 
+
+def rounded(low, high):
+    """Numbers of six decimals: nobody states a length of 1e-230 mm."""
+    return st.floats(low, high).map(lambda number: round(number, 6))
+
+
 # What a random member is made of: a section and the element its bolts go through.
 SECTIONS = {
     "125x75x10 UA": "long leg",
     "150x100x12 UA": "long leg",
     "150x90x8 UA": "long leg",
     "100x100x10 EA": "leg",
-    "2/125x75x8 UA, long legs, gap 40 mm": "long leg",
+    "2/125x75x8 UA, long legs": "long leg",
     "200 PFC": "web",
-    "2/230 PFC, webs, gap 40 mm": "web",
+    "2/230 PFC, webs": "web",
     "150x16 FL": "plate",
 }
 BOLTS = ["M16 8.8/S", "M20 8.8/S", "M24 8.8/TB", "M20 4.6/S"]
+
+
+def filled(name, t):
+    """The designation with a pair's gap as wide as the gusset is thick, in mm."""
+    return f"{name}, gap {t!r} mm" if name.startswith("2/") else name
+
+
+def on_gusset(plain, end, **plate):
+    """The member on another gusset, a pair's gap going with it."""
+    other = gusset(**plate)
+    name = filled(plain.profile.designation.partition(", gap")[0], other.thickness.internal)
+    return plain.but(section=name, end=end.but(plate=other))
 
 
 @st.composite
@@ -35,6 +53,7 @@ def bolted_members(draw, lines=(1, 2), per_line=(2, 9)):
     name = draw(st.sampled_from(sorted(SECTIONS)))
     to = SECTIONS[name]
     two = draw(st.sampled_from(lines)) == 2 and name != "100x100x10 EA"
+    thickness = draw(st.integers(5, 40))
     more = {}
     if two:
         more = {"lines": 2, "line_spacing": "46 mm"}
@@ -49,13 +68,13 @@ def bolted_members(draw, lines=(1, 2), per_line=(2, 9)):
         gauge="45 mm" if to.endswith("leg") else None,
         end_distance=f"{draw(st.integers(25, 90))} mm",
         plate=gusset(
-            thickness=f"{draw(st.integers(5, 40))} mm",
+            thickness=f"{thickness} mm",
             width=draw(st.sampled_from([None, "260 mm"])),
         ),
         plate_edge_distance=draw(st.sampled_from([None, "40 mm"])),
         **more,
     )
-    return member(name, end)
+    return member(filled(name, thickness), end)
 
 
 def capacities(calc):
@@ -116,7 +135,7 @@ def test_the_view_changes_no_number(plain, force):
 
 
 @usual
-@given(bolted_members(), st.floats(1.0, 5.0), st.floats(1.0, 3.0))
+@given(bolted_members(), rounded(1.0, 5.0), rounded(1.0, 3.0))
 def test_utilisation_scales_with_the_force(plain, over, factor):
     """Above the minimum design action every strength check is proportional to N*."""
     least = tl.design(plain, "0 kN").value("N_min").internal
@@ -130,7 +149,7 @@ def test_utilisation_scales_with_the_force(plain, over, factor):
 
 
 @usual
-@given(bolted_members(), st.floats(0.0, 1.0))
+@given(bolted_members(), rounded(0.0, 1.0))
 def test_below_the_minimum_action_the_connection_stands_still(plain, share):
     least = tl.design(plain, "0 kN")
     low = tl.design(plain, f"{share * least.value('N_min').internal!r} N")
@@ -157,7 +176,7 @@ def test_the_capacity_is_the_force_that_just_passes(plain):
 
 
 @usual
-@given(bolted_members(), st.floats(0.0, 4.0), st.floats(0.0, 4.0))
+@given(bolted_members(), rounded(0.0, 4.0), rounded(0.0, 4.0))
 def test_a_larger_hole_never_strengthens(plain, one, two):
     small, large = sorted((one, two))
     tight = plain.but(end=plain.end.but(clearance=f"{small!r} mm"))
@@ -170,15 +189,12 @@ BANDS = [(3.0, 8.0), (8.001, 12.0), (12.001, 50.0)]
 
 
 @usual
-@given(bolted_members(), st.sampled_from(BANDS), st.floats(0, 1), st.floats(0, 1), st.booleans())
+@given(bolted_members(), st.sampled_from(BANDS), rounded(0, 1), rounded(0, 1), st.booleans())
 def test_a_thicker_gusset_never_weakens_within_a_band(plain, band, one, two, weld):
-    if "gap" in plain.profile.designation:
-        band = BANDS[0]
     end = welded(to=plain.end.to) if weld else plain.end
     thin, thick = (band[0] + share * (band[1] - band[0]) for share in sorted((one, two)))
     calc = [
-        tl.design(plain.but(end=end.but(plate=gusset(thickness=f"{t!r} mm"))), "100 kN")
-        for t in (thin, thick)
+        tl.design(on_gusset(plain, end, thickness=f"{t!r} mm"), "100 kN") for t in (thin, thick)
     ]
     never_falls(*calc)
     for name, capacity in capacities(calc[0]).items():
@@ -187,13 +203,10 @@ def test_a_thicker_gusset_never_weakens_within_a_band(plain, band, one, two, wel
 
 
 @usual
-@given(bolted_members(), st.floats(3.0, 79.0))
+@given(bolted_members(), rounded(3.0, 79.0))
 def test_a_stronger_plate_never_weakens(plain, t):
-    assume("gap" not in plain.profile.designation or t < 40)
     calc = [
-        tl.design(
-            plain.but(end=plain.end.but(plate=gusset(thickness=f"{t!r} mm", steel=steel))), "9 kN"
-        )
+        tl.design(on_gusset(plain, plain.end, thickness=f"{t!r} mm", steel=steel), "9 kN")
         for steel in ("AS/NZS 3678 250", "AS/NZS 3678 300", "AS/NZS 3678 350")
     ]
     never_falls(calc[0], calc[1])

@@ -1,8 +1,8 @@
 """A record as HTML for a notebook: folds on screen, open in print, whole without style or script.
 
-Mathematics is LaTeX between dollar signs, which JupyterLab and exported pages typeset with their
-own bundled MathJax. A plain-text copy stands inside, hidden by the style sheet alone, so that a
-page stripped of styles still shows every number.
+Mathematics is MathML, which every browser of today sets by itself: an exported page needs neither
+script nor network. A plain-text copy stands inside, hidden by the style sheet alone, so that a page
+stripped of styles still shows every number.
 """
 
 from __future__ import annotations
@@ -12,7 +12,7 @@ from html import escape
 from importlib.resources import files
 from typing import Any
 
-from tensionlib.calculation.readings import text
+from tensionlib.calculation.readings import mathml, text
 
 Record = dict[str, Any]
 
@@ -37,12 +37,6 @@ def of(record: Record) -> str:
         f'<pre class="tl-text">{escape(text.of(record))}</pre>',
     ]
     return f'<style>{style()}</style><div class="tl-calc">{"".join(body)}</div>'
-
-
-def maths(latex: str) -> str:
-    """LaTeX set inline, fractions at full size; the HTML's own special characters escaped."""
-    size = r"\displaystyle " if r"\frac" in latex else ""
-    return f'<span class="tl-maths">${size}{escape(latex, quote=False)}$</span>'
 
 
 def _words(words: str, kind: str = "tl-words") -> str:
@@ -91,7 +85,7 @@ def _table(kind: str, head: list[str], rows: list[list[str]], numbers: range) ->
 def _inputs(record: Record) -> str:
     rows = [
         [
-            maths(f"{entry['latex']} = {entry['latex_value']}"),
+            mathml.of(f"{entry['latex']} = {entry['latex_value']}"),
             _words(entry["meaning"]),
             _words(entry["part"]),
             _words(entry["origin"]),
@@ -127,9 +121,9 @@ def _line(line: Record) -> str:
 def _steps(line: Record) -> str:
     first, *others = line["steps"]
     if not line["latex"]:
-        return "; ".join(map(maths, line["steps"]))
+        return "; ".join(map(mathml.of, line["steps"]))
     steps = [f"{line['latex']} = {first}", *(f"= {step}" for step in others)]
-    return " ".join(maths(term) for step in steps for term in _terms(step))
+    return "<wbr>".join(mathml.of(term) for step in steps for term in _terms(step))
 
 
 def _terms(latex: str) -> list[str]:
@@ -145,9 +139,7 @@ def _terms(latex: str) -> list[str]:
         elif depth == 0 and latex[at : at + 3] in (" + ", " - "):
             terms.append(latex[start:at])
             start = at + 1
-    # A sign that opens a term is set without the space of a sum.
-    first, *rest = [*terms, latex[start:]]
-    return [first, *(rf"{term[0]}\:{term[1:]}" for term in rest)]
+    return [*terms, latex[start:]]
 
 
 def _checks(record: Record) -> str:

@@ -63,6 +63,12 @@ def net_area(n_g: Any, b_e: Any, n_l: Any, d_h: Any, t_p: Any) -> Any:
     return n_g * (b_e - n_l * d_h) * t_p
 
 
+@formula("A_np", NZS, title="net area of the gusset, the bar's slot taken off", clause="9.1.10")
+def net_area_slotted(n_g: Any, b_e: Any, b: Any, t_p: Any) -> Any:
+    """Net area of a gusset with a slot as wide as the bar laid in it [area]. 9.1.10."""
+    return n_g * (b_e - b) * t_p
+
+
 @formula("N_py", NZS, title="yielding of the gusset", clause="7.2")
 def yielding(A_gp: Any, f_yp: Any) -> Any:
     """Nominal capacity of the gusset in gross yielding [force]. 7.2."""

@@ -38,6 +38,8 @@ def check_gusset(
         A_np = work.step(
             gusset.net_area, n_g, b_e, end.take(work, "n_l"), end.kept_line("d_h"), t_p
         )
+    elif end.choice("to") == "bar":
+        A_np = work.step(gusset.net_area_slotted, n_g, b_e, end.take(work, "b"), t_p)
     else:
         A_np = A_gp
     N_pu = work.step(gusset.fracture, A_np, f_up)

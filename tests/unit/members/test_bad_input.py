@@ -173,7 +173,12 @@ GEOMETRY = [
     (
         lambda: design("2/125x75x10 UA, long legs, gap 10 mm"),
         InputError,
-        "plate.thickness: 12 mm does not go into the gap",
+        "plate.thickness: got 12 mm in the gap of 2/125x75x10 UA, long legs, gap 10 mm",
+    ),
+    (
+        lambda: design("2/125x75x10 UA, long legs, gap 40 mm"),
+        InputError,
+        "packing plates are not covered",
     ),
     (
         lambda: design("2/125x75x10 UA, short legs, gap 12 mm"),
