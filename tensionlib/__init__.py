@@ -36,9 +36,12 @@ if TYPE_CHECKING:
     from tensionlib.quantities import steps as steps
     from tensionlib.quantities import values as values
     from tensionlib.steel import bolt as bolt
+    from tensionlib.steel import by_dimensions as by_dimensions
+    from tensionlib.steel import double as double
     from tensionlib.steel import find as find
     from tensionlib.steel import grade as grade
     from tensionlib.steel import section as section
+    from tensionlib.steel import stated as stated
 
 _WHERE = {
     "Bolted": "joints.ends",
@@ -55,15 +58,18 @@ _WHERE = {
     "Welded": "joints.ends",
     "Working": "calculation.working",
     "bolt": "steel",
+    "by_dimensions": "steel",
     "check_file": "package.project",
     "condition": "calculation.formula",
     "design": "members.design",
+    "double": "steel",
     "find": "steel",
     "formula": "calculation.formula",
     "grade": "steel",
     "issue": "package.issue",
     "project_notation": "calculation.symbols",
     "section": "steel",
+    "stated": "steel",
     "steps": "quantities",
     "values": "quantities",
 }

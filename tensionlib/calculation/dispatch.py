@@ -51,19 +51,6 @@ def _extreme(args: tuple[Any, ...], plain: Any, array: str, symbol: str) -> Any:
     return plain(args)
 
 
-def where(condition: Any, yes: Any, no: Any) -> Any:
-    """`yes` where the condition holds, else `no`. Both are worked out."""
-    if isinstance(condition, bool):
-        return yes if condition else no
-    if _symbolic(condition):
-        import sympy
-
-        return sympy.Piecewise((yes, condition), (no, True))
-    import numpy as np
-
-    return np.where(condition, yes, no)
-
-
 def square(value: Any) -> Any:
     """The square, as a product: a power differs in the last bit between Python and numpy."""
     return value * value

@@ -53,7 +53,7 @@ class Entry:
     __bool__ = __float__ = __int__ = __neg__ = __abs__ = _refuse
     __add__ = __radd__ = __sub__ = __rsub__ = __mul__ = __rmul__ = _refuse
     __truediv__ = __rtruediv__ = __pow__ = __rpow__ = _refuse
-    __lt__ = __le__ = __gt__ = __ge__ = __eq__ = __ne__ = _refuse  # type: ignore[assignment]
+    __lt__ = __le__ = __gt__ = __ge__ = __eq__ = __ne__ = _refuse
     __hash__ = object.__hash__
 
 

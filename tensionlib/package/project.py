@@ -153,7 +153,7 @@ class CheckedFile:
     def _repr_mimebundle_(self, include: Any = None, exclude: Any = None) -> dict[str, Any]:
         head = "".join(f"<th>{escape(cell)}</th>" for cell in SUMMARY_HEAD)
         body = "".join(
-            "<tr>" + "".join(f"<td>{escape(cell)}</td>" for cell in row) + "</tr>"
+            "<tr>" + "".join(f"<td>{_whole(cell, i)}</td>" for i, cell in enumerate(row)) + "</tr>"
             for row in self.summary()
         )
         return {
@@ -163,6 +163,12 @@ class CheckedFile:
             f"{body}</tbody></table></div>",
             MIMETYPE: self.record(),
         }
+
+
+def _whole(cell: str, column: int) -> str:
+    """A cell of the summary; a force is not torn from its unit."""
+    shown = escape(cell)
+    return shown.replace(" ", "&nbsp;") if SUMMARY_HEAD[column] in ("N*", "Section") else shown
 
 
 def check_file(

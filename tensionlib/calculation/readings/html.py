@@ -79,7 +79,8 @@ def _table(kind: str, head: list[str], rows: list[list[str]], numbers: range) ->
         return "<tr>" + "".join(f"<{tag}{to}>{cell}</{tag}>" for to, cell in inside) + "</tr>"
 
     body = "".join(row("td", cells) for cells in rows)
-    return f'<table class="{kind}"><thead>{row("th", head)}</thead><tbody>{body}</tbody></table>'
+    table = f'<table class="{kind}"><thead>{row("th", head)}</thead><tbody>{body}</tbody></table>'
+    return f'<div class="tl-wide">{table}</div>'
 
 
 def _inputs(record: Record) -> str:

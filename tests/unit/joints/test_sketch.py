@@ -12,6 +12,7 @@ from tensionlib.joints.scene import (
     TEXT_HEIGHT,
     Chain,
     Circle,
+    Curve,
     Line,
     Scene,
     spread,
@@ -139,6 +140,15 @@ def test_no_text_on_another_nor_on_a_bolt_nor_outside(name):
         for head in heads:
             xs, ys = zip(*head.points, strict=True)
             assert _apart(text.box(), (min(xs), min(ys), max(xs), max(ys))), text.text
+
+
+@pytest.mark.parametrize("name", CASES)
+def test_the_force_stands_clear_of_the_section(name):
+    scene = _scene(name)
+    label = next(text for text in scene.texts() if text.text == FORCE)
+    curves = [i for i in scene.items if isinstance(i, Curve)]
+    for curve in curves:
+        assert label.box()[2] < min(step[0] for step in curve.steps)
 
 
 @pytest.mark.parametrize("name", CASES)
