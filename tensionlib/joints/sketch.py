@@ -30,7 +30,7 @@ from tensionlib.steel.shapes import outline
 
 SHEET = 160.0
 _LEFT = 26.0  # where the gusset's cut edge stands
-_RIGHT = 85.0  # where the member's cut end stands
+_RIGHT = 84.0  # where the member's cut end stands
 _ARROW = 15.0
 _SECTION = 138.0  # middle of the section's place
 _TOP = 17.0
