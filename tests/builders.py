@@ -41,7 +41,7 @@ def welded(**changes: Any) -> tl.Welded:
     return tl.Welded(**usual | changes)
 
 
-def member(section: Any = "125x75x10 UA", end: Any = None, **changes: Any) -> tl.Member:
+def member(section: Any = "150x90x10 UA", end: Any = None, **changes: Any) -> tl.Member:
     usual = {
         "mark": "T1",
         "section": section,

@@ -104,7 +104,7 @@ class Working:
         symbol : str or Symbol
         value : quantity or text with a unit; a plain number for a count or a factor
         origin : str
-            Who says so: "schedule row 3", "125x75x10 UA", "given".
+            Who says so: "schedule row 3", "150x90x10 UA", "given".
         key : str
             Name under which an array fill puts its values; the symbol's name unless given.
 

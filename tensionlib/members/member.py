@@ -20,7 +20,7 @@ class Member:
     mark : str
         The member's mark on the drawings: "RB1".
     section : str or Section
-        Designation ("125x75x10 UA") or a section of your own.
+        Designation ("150x90x10 UA") or a section of your own.
     steel : str or Grade
         Grade of the section: "AS/NZS 3679.1 300".
     length : length
@@ -57,7 +57,7 @@ class Member:
             object.__setattr__(self, "section", section(self.section))
         elif not isinstance(self.section, Section):
             raise InputError(
-                f"section: got {self.section!r}; a designation is due, for example '125x75x10 UA'"
+                f"section: got {self.section!r}; a designation is due, for example '150x90x10 UA'"
             )
         if isinstance(self.steel, str):
             object.__setattr__(self, "steel", grade(self.steel))

@@ -27,7 +27,7 @@ The notebook is executed from top to bottom in a fresh kernel; the PDF is writte
 or not at all. exit code: 0 written, 1 a member does not pass, 2 bad input or a failing cell"""
 
 _SECTIONS = """examples:
-  tensionlib sections "125x75x10 UA"
+  tensionlib sections "150x90x10 UA"
   tensionlib sections --family UA --min-area "1500 mm2"
   tensionlib sections --family EA --leg "100 mm" --most 5"""
 

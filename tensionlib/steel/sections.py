@@ -275,7 +275,7 @@ def _by_designation(family: str) -> dict[str, Section]:
 _PAIR = re.compile(r"2\s*/(.+)", re.DOTALL)
 _FACING = {"long legs": "long leg", "short legs": "short leg", "legs": "long leg", "webs": "web"}
 
-_PAIR_FORMS = " write it as '2/125x75x10 UA, long legs, gap 12 mm' or '2/150 PFC, webs, gap 16 mm'"
+_PAIR_FORMS = " write it as '2/150x90x10 UA, long legs, gap 12 mm' or '2/150 PFC, webs, gap 16 mm'"
 
 
 def _pair(name: str, written: str) -> Section:
@@ -299,8 +299,8 @@ def _pair(name: str, written: str) -> Section:
 def section(name: str) -> Section:
     """A section by its designation, tolerant of blanks, case and ×.
 
-    "125x75x10 UA", "100x100x8 EA", "150 PFC", "310 UB 40.4", "155 BT 20.2", "100x12 FL", "30 RB",
-    "114.3x4.8 CHS", "150x100x6.0 RHS". A pair is "2/125x75x10 UA, long legs, gap 12 mm" or
+    "150x90x10 UA", "100x100x8 EA", "150 PFC", "310 UB 40.4", "155 BT 20.2", "100x12 FL", "30 RB",
+    "114.3x4.8 CHS", "150x100x6.0 RHS". A pair is "2/150x90x10 UA, long legs, gap 12 mm" or
     "2/150 PFC, webs, gap 16 mm", in either order and with "back to back" or without; angles face
     each other by their long legs unless "short legs" is written.
 
@@ -310,7 +310,7 @@ def section(name: str) -> Section:
         For what is not in the catalogue, with the nearest names.
     """
     if not isinstance(name, str):
-        raise InputError(f"section: got {name!r}; a designation is due, for example '125x75x10 UA'")
+        raise InputError(f"section: got {name!r}; a designation is due, for example '150x90x10 UA'")
     pair = _PAIR.fullmatch(name.strip())
     if pair:
         return _pair(name, pair[1])
@@ -320,7 +320,7 @@ def section(name: str) -> Section:
     found = _by_designation(family).get(folded) if family in FAMILIES else None
     if found is None:
         near = did_you_mean(name, catalogue().designations)
-        hint = "" if near else " For example '125x75x10 UA', '150 PFC', '114.3x4.8 CHS'."
+        hint = "" if near else " For example '150x90x10 UA', '150 PFC', '114.3x4.8 CHS'."
         raise DataNotFoundError(f"section: {name!r} is not in the catalogue.{near}{hint}")
     return found
 

@@ -170,7 +170,7 @@ def calculation(mark: str = "RB1", title: str = "roof brace", **more: Any) -> di
     }
     by = "governed by" if word == "PASS" else "by"
     headline = (
-        f"{mark}: 125x75x10 UA, AS/NZS 3679.1 300, N* = 285 kN: {word}, {by} net section rupture"
+        f"{mark}: 150x90x10 UA, AS/NZS 3679.1 300, N* = 285 kN: {word}, {by} net section rupture"
         f" (7.2), utilisation {used:.3f}"
     )
     parts = [
@@ -203,7 +203,7 @@ def calculation(mark: str = "RB1", title: str = "roof brace", **more: Any) -> di
             }
         )
         headline = (
-            f"{mark}: 125x75x10 UA, AS/NZS 3679.1 300, N* = 285 kN: NOT COVERED,"
+            f"{mark}: 150x90x10 UA, AS/NZS 3679.1 300, N* = 285 kN: NOT COVERED,"
             " block shear of a staggered pattern (9.1.9)"
         )
     record = {
@@ -212,7 +212,7 @@ def calculation(mark: str = "RB1", title: str = "roof brace", **more: Any) -> di
         "kind": "calculation",
         "mark": mark,
         "title": title,
-        "subject": "125x75x10 UA, AS/NZS 3679.1 300",
+        "subject": "150x90x10 UA, AS/NZS 3679.1 300",
         "standard": {"name": "NZS 3404:Part 1:1997", "key": "nzs3404"},
         "headline": headline,
         "verdict": {"passes": word == "PASS", "word": word, "governing": governing},
@@ -235,7 +235,7 @@ def calculation(mark: str = "RB1", title: str = "roof brace", **more: Any) -> di
                 "latex_value": r"1860\ \text{mm}^{2}",
                 "value": 1860.0,
                 "unit": "mm2",
-                "origin": "125x75x10 UA",
+                "origin": "150x90x10 UA",
             },
             {
                 "symbol": "t",
@@ -245,7 +245,7 @@ def calculation(mark: str = "RB1", title: str = "roof brace", **more: Any) -> di
                 "latex_value": r"10\ \text{mm}",
                 "value": 10.0,
                 "unit": "mm",
-                "origin": "125x75x10 UA",
+                "origin": "150x90x10 UA",
             },
         ],
         "parts": parts,

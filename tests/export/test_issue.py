@@ -91,7 +91,7 @@ def test_a_member_that_does_not_pass_is_issued_only_when_that_is_allowed(written
     with pytest.raises(NotPassingError) as caught:
         issue(path, progress=False)
     assert caught.value.marks == (("RB2", "FAIL"), ("RB3", "NOT COVERED"))
-    assert "RB2: 125x75x10 UA" in str(caught.value)
+    assert "RB2: 150x90x10 UA" in str(caught.value)
     assert "RB1:" not in str(caught.value)
     assert "allow_failing=True" in str(caught.value)
     assert names(tmp_path) == ["canopy.ipynb"]

@@ -131,7 +131,7 @@ def test_the_summary_names_the_page_on_which_each_calculation_stands(package):
     pages = pages_of(package)
     summary = next(page for page in pages if "Summary of results" in page and "MARK" in page)
     for number in range(1, 9):
-        row = re.search(rf"RB{number} 125x75x10 UA 285 kN .*?(\d+)(?= RB| \d+ of| Basis)", summary)
+        row = re.search(rf"RB{number} 150x90x10 UA 285 kN .*?(\d+)(?= RB| \d+ of| Basis)", summary)
         assert row is not None
         there = int(row[1])
         assert f"RB{number} – brace {number}" in pages[there - 1]
@@ -175,7 +175,7 @@ def test_an_input_of_both_ends_says_of_which_end_it_is(make):
 
 def test_a_calculation_shown_again_is_referred_to_by_its_page(package):
     pages = pages_of(package)
-    there = next(i for i, page in enumerate(pages, 1) if "RB1: 125x75x10" in page)
+    there = next(i for i, page in enumerate(pages, 1) if "RB1: 150x90x10" in page)
     assert f"RB1: see page {there}" in " ".join(pages)
 
 
@@ -187,9 +187,9 @@ def test_the_basis_gathers_sources_members_and_assumptions(make):
         make.code(make.shown(make.calculation("RB2", assumptions=[shared]))),
     )
     start = text.rindex("Basis of design")
-    basis = text[start : text.index("RB1: 125x75x10", start)]
+    basis = text[start : text.index("RB1: 150x90x10", start)]
     assert "NZS 3404:Part 1:1997 member and connection design from memory" in basis
-    assert "125x75x10 UA, AS/NZS 3679.1 300 RB1, RB2" in basis
+    assert "150x90x10 UA, AS/NZS 3679.1 300 RB1, RB2" in basis
     assert f"– {shared} – {own} (RB1)" in basis
 
 

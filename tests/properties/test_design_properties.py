@@ -23,11 +23,11 @@ def rounded(low, high):
 
 # What a random member is made of: a section and the element its bolts go through.
 SECTIONS = {
-    "125x75x10 UA": "long leg",
+    "150x90x10 UA": "long leg",
     "150x100x12 UA": "long leg",
     "150x90x8 UA": "long leg",
     "100x100x10 EA": "leg",
-    "2/125x75x8 UA, long legs": "long leg",
+    "2/150x90x8 UA, long legs": "long leg",
     "200 PFC": "web",
     "2/230 PFC, webs": "web",
     "150x16 FL": "plate",

@@ -54,7 +54,7 @@ QUANTITIES = {"length": LENGTH, "force": FORCE}
 _UNITS = {"length": "mm", "force": "kN"}
 _WRITE = {
     "mark": "the member's mark, for example 'RB1'",
-    "section": "a designation, for example '125x75x10 UA'",
+    "section": "a designation, for example '150x90x10 UA'",
     "steel": "a grade, for example 'AS/NZS 3679.1 300'",
     "length": f"a length, for example {LENGTH_EXAMPLE!r}",
     "force": f"the tension force, for example {FORCE_EXAMPLE!r}, or '0 kN' for none",

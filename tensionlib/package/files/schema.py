@@ -278,7 +278,7 @@ class MemberTable(Table):
 
     mark: Name = Field(examples=["RB1"])
     title: Block = ""
-    section: Name = Field(examples=["125x75x10 UA"])
+    section: Name = Field(examples=["150x90x10 UA"])
     steel: Name = Field(examples=["AS/NZS 3679.1 300"])
     length: Annotated[Quantity, above_zero(LENGTH_EXAMPLE)] = Field(examples=[LENGTH_EXAMPLE])
     force: Force = Field(examples=[FORCE_EXAMPLE])

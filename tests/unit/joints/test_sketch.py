@@ -64,7 +64,7 @@ CASES = {
             angle,
             _bolted("long leg", n, "80 mm", "40 mm", 2, "45 mm", "55 mm", "40 mm"),
         )
-        for angle, n in itertools.product(("125x75x10 UA", "150x100x12 UA"), (2, 3, 5))
+        for angle, n in itertools.product(("150x90x10 UA", "150x100x12 UA"), (2, 3, 5))
     },
     "short leg": ("150x90x10 UA", _bolted("short leg", 2, "80 mm", "45 mm", gauge="50 mm")),
     "both flanges": (
@@ -77,7 +77,7 @@ CASES = {
     "tee stem": ("155 BT 20.2", _bolted("web", 3, "70 mm", "40 mm")),
     "flat": ("130x12 FL", _bolted("plate", 4, "80 mm", "45 mm", size="M24")),
     "welded angle": (
-        "125x75x10 UA",
+        "150x90x10 UA",
         tl.Welded("long leg", "6 mm", PLATE, "160 mm", "90 mm", "125 mm"),
     ),
     "welded short": ("100x100x8 EA", tl.Welded("leg", "6 mm", PLATE, "40 mm")),
@@ -91,7 +91,7 @@ CASES = {
         tl.Welded("slot", "5 mm", PLATE, "400 mm", slot_clearance="3 mm"),
     ),
     "double angle": (
-        "2/100x75x8 UA, long legs, gap 12 mm",
+        "2/100x100x8 EA, legs, gap 12 mm",
         _bolted("long leg", 2, "70 mm", "35 mm", gauge="55 mm"),
     ),
     "wide gusset": (

@@ -14,7 +14,7 @@ from tensionlib.units import kN, mm
 from tests.builders import TUBE_STEEL, bolted, gusset, member, tube, two_lines, welded
 
 
-def design(section="125x75x10 UA", end=None, force="1 kN", **changes):
+def design(section="150x90x10 UA", end=None, force="1 kN", **changes):
     return tl.design(member(section, end, **changes), force)
 
 
@@ -60,7 +60,7 @@ NUMBERS = [
 NAMES = [
     (lambda: member(mark=" "), InputError, "mark: empty; .* 'RB1'"),
     (lambda: member(mark=3), InputError, "mark: got 3; text is due"),
-    (lambda: member("125x75x9 UA"), DataNotFoundError, "Did you mean '125x75x"),
+    (lambda: member("150x90x9 UA"), DataNotFoundError, "Did you mean '150x90x"),
     (lambda: member(125), InputError, "section: got 125; a designation is due"),
     (lambda: member(steel="AS/NZS 3679.1 310"), DataNotFoundError, "Did you mean 'AS/NZS 3679.1"),
     (lambda: member(steel=300), InputError, "steel: got 300; a grade is due"),
@@ -131,12 +131,12 @@ GEOMETRY = [
         InputError,
         "stagger: 71 mm; it is at most the pitch",
     ),
-    (lambda: design(end=bolted(gauge="114 mm")), InputError, "leaves the long leg, 125 mm wide"),
+    (lambda: design(end=bolted(gauge="139 mm")), InputError, "leaves the long leg, 150 mm wide"),
     (lambda: design(end=bolted(gauge="20 mm")), InputError, "run into the other leg .* 20.5 mm"),
     (
-        lambda: design(end=bolted(lines=2, line_spacing="60 mm")),
+        lambda: design(end=bolted(lines=2, line_spacing="90 mm")),
         InputError,
-        "the hole leaves the long leg, 125 mm wide",
+        "the hole leaves the long leg, 150 mm wide",
     ),
     (
         lambda: design("65x10 FL", two_lines(to="plate", line_spacing="50 mm")),
@@ -171,17 +171,17 @@ GEOMETRY = [
     ),
     (lambda: design("100x12 FL", welded(to="bar")), InputError, "can be welded by its 'plate'"),
     (
-        lambda: design("2/125x75x10 UA, long legs, gap 10 mm"),
+        lambda: design("2/150x90x10 UA, long legs, gap 10 mm"),
         InputError,
-        "plate.thickness: got 12 mm in the gap of 2/125x75x10 UA, long legs, gap 10 mm",
+        "plate.thickness: got 12 mm in the gap of 2/150x90x10 UA, long legs, gap 10 mm",
     ),
     (
-        lambda: design("2/125x75x10 UA, long legs, gap 40 mm"),
+        lambda: design("2/150x90x10 UA, long legs, gap 40 mm"),
         InputError,
         "packing plates are not covered",
     ),
     (
-        lambda: design("2/125x75x10 UA, short legs, gap 12 mm"),
+        lambda: design("2/150x90x10 UA, short legs, gap 12 mm"),
         InputError,
         "face the gusset by their short leg",
     ),

@@ -12,7 +12,7 @@ from tensionlib.members import book
 
 
 def _random_member(rng: random.Random) -> tl.Member:
-    section = rng.choice(["125x75x10 UA", "150x100x12 UA", "150x90x16 UA", "125x75x6 UA"])
+    section = rng.choice(["150x90x10 UA", "150x100x12 UA", "150x90x16 UA", "150x90x8 UA"])
     per_line = rng.choice([1, 2, 3, 6, 20])
     end = tl.Bolted(
         to="long leg",

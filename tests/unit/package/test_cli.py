@@ -127,8 +127,8 @@ def test_good_rows_are_reported_on_request(design_file, capsys):
 
 
 def test_sections_by_name_and_by_search(capsys):
-    assert main(["sections", "125 x 75 x 10 ua"]) == PASSES
-    assert "125x75x10 UA" in capsys.readouterr().out
+    assert main(["sections", "150 x 90 x 10 ua"]) == PASSES
+    assert "150x90x10 UA" in capsys.readouterr().out
     assert main(["sections", "--family", "EA", "--leg", "100 mm", "--min-area", "1600 mm2"]) == 0
     out = capsys.readouterr().out
     assert "100x100x10 EA" in out
@@ -138,8 +138,8 @@ def test_sections_by_name_and_by_search(capsys):
 
 
 def test_sections_bad_input(capsys):
-    assert main(["sections", "125x75x11 UA"]) == BAD_INPUT
-    assert "Did you mean '125x75x1" in capsys.readouterr().err
+    assert main(["sections", "150x90x11 UA"]) == BAD_INPUT
+    assert "Did you mean '150x90x1" in capsys.readouterr().err
     assert main(["sections", "--family", "UA", "--min-area", "1500"]) == BAD_INPUT
     assert "--min-area" in capsys.readouterr().err
 

@@ -53,7 +53,7 @@ def _only(*names: str) -> Callable[[str], None]:
 
 
 KNOWN = KnownNames(
-    section=_only("125x75x10 UA", "100x100x8 EA"),
+    section=_only("150x90x10 UA", "100x100x8 EA"),
     steel=_only("AS/NZS 3679.1 300", "AS/NZS 3678 250"),
     bolts=_only("M20 8.8/S", "M24 8.8/S"),
     metal=_only("E48XX"),
@@ -115,7 +115,7 @@ width = "260 mm"
 [[members]]
 mark = "RB1"
 title = "roof brace, grid B"
-section = "125x75x10 UA"
+section = "150x90x10 UA"
 steel = "AS/NZS 3679.1 300"
 length = "4.6 m"
 force = "285 kN"
@@ -144,7 +144,7 @@ end = "A"
 """
 ROWS = """\
 mark,section,"length, m",N star [kN],note,checked?
-RB3,125x75x10 UA,4.6,285,"brace, grid C",y
+RB3,150x90x10 UA,4.6,285,"brace, grid C",y
 RB4,100x100x8 EA,5.1,0,,
 """
 
@@ -182,7 +182,7 @@ def test_members_ends_and_project_are_read(folder: Path) -> None:
     assert design.standard.name == "NZS 3404"
     assert list(design.ends) == ["A", "welded 6"]
     first, second = design.members
-    assert (first.mark, first.title, first.section) == ("RB1", "roof brace, grid B", "125x75x10 UA")
+    assert (first.mark, first.title, first.section) == ("RB1", "roof brace, grid B", "150x90x10 UA")
     assert (first.length.internal, first.force.internal) == (4600.0, 285_000.0)
     assert first.end_1 == first.end_2 == design.ends["A"]
     assert (second.end_1.name, second.end_2.name) == ("A", "welded 6")
@@ -259,7 +259,7 @@ def test_good_rows_are_members_when_asked_for(folder: Path) -> None:
 
 
 def test_a_length_by_default_of_the_schedule(folder: Path) -> None:
-    (folder / "members.csv").write_text("mark,section,force [kN]\nRB3,125x75x10 UA,1\n")
+    (folder / "members.csv").write_text("mark,section,force [kN]\nRB3,150x90x10 UA,1\n")
     text = SCHEDULE.replace('force = "N star"', "").replace(
         'end = "A"', 'end = "A"\nlength = "5 m"'
     )
@@ -700,12 +700,12 @@ BAD: list[tuple[str, str, list[tuple[str, str]]]] = [
         [('"0 m"', "members[1].length: got 0 mm; it must be above 0 mm")],
     ),
     (
-        'section = "125x75x10 UA"',
-        'section = "125x75x11 UA"',
+        'section = "150x90x10 UA"',
+        'section = "150x90x11 UA"',
         [
             (
-                "125x75x11 UA",
-                "members[1].section: '125x75x11 UA' is not known. Did you mean '125x75x10 UA'?",
+                "150x90x11 UA",
+                "members[1].section: '150x90x11 UA' is not known. Did you mean '150x90x10 UA'?",
             )
         ],
     ),
@@ -1402,7 +1402,7 @@ def test_a_change_that_breaks_the_schedule_is_refused(folder: Path) -> None:
     text = DESIGN + SCHEDULE.replace('end = "A"', "").replace("steel", 'end_1 = "A"\nsteel')
     (folder / "canopy.toml").write_text(text)
     (folder / "members.csv").write_text(
-        'mark,section,"length, m",N star [kN],end\nRB3,125x75x10 UA,4.6,285,welded 6\n'
+        'mark,section,"length, m",N star [kN],end\nRB3,150x90x10 UA,4.6,285,welded 6\n'
     )
     text = text.replace('end_1 = "A"\n', "").replace('far_end = "welded 6"', 'far_end = "A"')
     (folder / "canopy.toml").write_text(text)

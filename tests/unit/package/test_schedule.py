@@ -40,7 +40,7 @@ def _only(*names: str) -> Callable[[str], None]:
     return look_up
 
 
-UA, EA, STEEL = "125x75x10 UA", "100x100x8 EA", "AS/NZS 3679.1 300"
+UA, EA, STEEL = "150x90x10 UA", "100x100x8 EA", "AS/NZS 3679.1 300"
 KNOWN = KnownNames(
     section=_only(UA, EA),
     steel=_only(STEEL),
@@ -267,14 +267,14 @@ def test_good_rows_are_there_beside_bad_ones(tmp_path: Path) -> None:
 
 def test_strict_lists_every_problem(tmp_path: Path) -> None:
     text = _csv(
-        HEAD, _row(section="125x75x11 UA", end="B"), _row(mark="RB2"), _row(mark="RB3", length="")
+        HEAD, _row(section="150x90x11 UA", end="B"), _row(mark="RB2"), _row(mark="RB3", length="")
     )
     with pytest.raises(ScheduleError) as caught:
         _read(tmp_path, text, strict=True)
     assert str(caught.value) == (
         "3 problems:\n"
-        "  members.csv, row 2, section: '125x75x11 UA' is not known."
-        " Did you mean '125x75x10 UA'?\n"
+        "  members.csv, row 2, section: '150x90x11 UA' is not known."
+        " Did you mean '150x90x10 UA'?\n"
         "  members.csv, row 2, end: no end is named 'B'; ends are 'A', 'bolted 3M20'.\n"
         "  members.csv, row 4, length [m]: is empty; write a length, for example '4.6 m'"
     )
@@ -301,10 +301,10 @@ BAD_CELLS = [
         {"mark": "RB\x07"},
         "mark: holds the control character U+0007, which cannot be printed; take it out",
     ),
-    ({"section": ""}, "section: is empty; write a designation, for example '125x75x10 UA'"),
+    ({"section": ""}, "section: is empty; write a designation, for example '150x90x10 UA'"),
     (
-        {"section": "125x75x11 UA"},
-        "section: '125x75x11 UA' is not known. Did you mean '125x75x10 UA'?",
+        {"section": "150x90x11 UA"},
+        "section: '150x90x11 UA' is not known. Did you mean '150x90x10 UA'?",
     ),
     ({"steel": ""}, "steel: is empty; write a grade, for example 'AS/NZS 3679.1 300'"),
     (
@@ -394,7 +394,7 @@ def test_one_mark_in_several_rows_makes_none_of_them_good(tmp_path: Path) -> Non
 
 
 def test_a_row_with_too_many_cells_is_told(tmp_path: Path) -> None:
-    text = ",".join(HEAD) + "\nRB1,125x75x10 UA,AS/NZS 3679.1 300,4,6,285,A\n"
+    text = ",".join(HEAD) + "\nRB1,150x90x10 UA,AS/NZS 3679.1 300,4,6,285,A\n"
     assert _problems(_read(tmp_path, text)) == [
         "members.csv, row 2: has 7 cells under 6 headers; put a text that holds the separator in"
         " quotation marks, and write decimals with a point"
@@ -671,9 +671,9 @@ BAD_ARGUMENTS: list[tuple[dict[str, Mapping[str, str]], type[Exception], str]] =
         "defaults: end: no end is named 'B'; ends are 'A', 'bolted 3M20'.",
     ),
     (
-        {"defaults": {"section": "125x75x11 UA"}},
+        {"defaults": {"section": "150x90x11 UA"}},
         DataNotFoundError,
-        "defaults: section: '125x75x11 UA' is not known. Did you mean '125x75x10 UA'?",
+        "defaults: section: '150x90x11 UA' is not known. Did you mean '150x90x10 UA'?",
     ),
 ]
 
@@ -910,14 +910,14 @@ def test_rows_are_plain_frozen_data(tmp_path: Path) -> None:
 
 def test_the_librarys_catalogues_decide_what_is_known(tmp_path: Path) -> None:
     text = _csv(
-        (*HEAD, "standard"), (*GOOD, "NZS 3404"), (*_row(mark="RB2", section="125x75x11 UA"), "")
+        (*HEAD, "standard"), (*GOOD, "NZS 3404"), (*_row(mark="RB2", section="150x90x11 UA"), "")
     )
     (tmp_path / "members.csv").write_text(text)
     read = read_schedule(tmp_path / "members.csv", ends=ENDS, strict=False)
     assert [row.mark for row in read.rows] == ["RB1"]
     [problem] = read.problems
     assert (problem.row, problem.column) == (3, "section")
-    assert "125x75x11 UA" in problem.reason
+    assert "150x90x11 UA" in problem.reason
     assert "Did you mean" in problem.reason
 
 

@@ -29,17 +29,17 @@ def run(leg: float, length: float, *, phi: float = 0.8, f_uw: float = 480.0) -> 
 
 
 def test_angle_with_a_transverse_run():
-    """125x75x10 UA by the long leg: runs of 180 and 120, and 125 across the end."""
-    end = welded(length_1="180 mm", length_2="120 mm", transverse="125 mm")
-    calc = tl.design(member("125x75x10 UA", end), "300 kN")
-    A_g = 9.5 * (125 + 75 - 9.5) + FILLET * (8**2 - 2 * 5**2)
-    b_d = 125 + SPREAD * 120
+    """150x90x10 UA by the long leg: runs of 180 and 120, and 150 across the end."""
+    end = welded(length_1="180 mm", length_2="120 mm", transverse="150 mm")
+    calc = tl.design(member("150x90x10 UA", end), "300 kN")
+    A_g = 9.5 * (150 + 90 - 9.5) + FILLET * (10**2 - 2 * 5**2)
+    b_d = 150 + SPREAD * 120
     agree(
         calc,
         {
             ("Member", "gross section yield"): 0.9 * A_g * 320,
             ("Net section", "net section rupture"): 0.9 * 0.85 * 0.85 * A_g * 440,
-            ("Welds", "weld"): run(6, 180 + 120 + 125),
+            ("Welds", "weld"): run(6, 180 + 120 + 150),
             ("Gusset", "yield"): 0.9 * b_d * 12 * 260,
             ("Gusset", "rupture"): 0.9 * 0.85 * b_d * 12 * 410,
         },
@@ -50,15 +50,15 @@ def test_angle_with_a_transverse_run():
 def test_side_runs_alone_are_advised_to_be_as_long_as_the_leg():
     calc = tl.design(member(end=welded(length_1="180 mm", length_2="120 mm")), "100 kN")
     advice = calc["weld length over the width between runs"]
-    assert (advice.demand.internal, advice.capacity.internal) == (125.0, 120.0)
+    assert (advice.demand.internal, advice.capacity.internal) == (150.0, 120.0)
     assert (advice.kind, advice.verdict) == ("advice", "advice")
     assert calc.word == "PASS"
 
 
 def test_two_angles_welded():
     """Both sides of the gusset: twice the runs, k_te 1.0."""
-    calc = tl.design(member("2/125x75x10 UA, long legs, gap 12 mm", welded()), "500 kN")
-    A_g = 2 * (9.5 * (125 + 75 - 9.5) + FILLET * (8**2 - 2 * 5**2))
+    calc = tl.design(member("2/150x90x10 UA, long legs, gap 12 mm", welded()), "500 kN")
+    A_g = 2 * (9.5 * (150 + 90 - 9.5) + FILLET * (10**2 - 2 * 5**2))
     assert calc["weld"].capacity.internal == pytest.approx(run(6, 2 * 2 * 150))
     assert calc["net section rupture"].capacity.internal == pytest.approx(0.9 * 0.85 * A_g * 440)
 

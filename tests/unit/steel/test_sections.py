@@ -104,18 +104,18 @@ def test_moving_the_outline_moves_only_its_centroid():
 @pytest.mark.parametrize(
     ("written", "meant"),
     [
-        ("125 x 75 x 10 ua", "125x75x10 UA"),
-        ("125×75×10UA", "125x75x10 UA"),
+        ("150 x 90 x 10 ua", "150x90x10 UA"),
+        ("150×90×10UA", "150x90x10 UA"),
         ("100X100X8 EA", "100x100x8 EA"),
         ("150pfc", "150 PFC"),
         ("310UB40.4", "310 UB 40.4"),
         ("155BT20.2", "155 BT 20.2"),
-        ("2/125x75x10 UA, long legs, gap 12 mm", "2/125x75x10 UA, long legs, gap 12 mm"),
+        ("2/150x90x10 UA, long legs, gap 12 mm", "2/150x90x10 UA, long legs, gap 12 mm"),
         ("2/150 PFC, gap 16 mm", "2/150 PFC, webs, gap 16 mm"),
         ("2 / 150 pfc, gap 1.6 cm, Webs", "2/150 PFC, webs, gap 16 mm"),
         (
-            "2/125 x 75 x 10 UA, short legs back to back, gap 12 mm",
-            "2/125x75x10 UA, short legs, gap 12 mm",
+            "2/150 x 90 x 10 UA, short legs back to back, gap 12 mm",
+            "2/150x90x10 UA, short legs, gap 12 mm",
         ),
         ("2/100x100x8 EA, legs, gap 10 mm", "2/100x100x8 EA, long legs, gap 10 mm"),
     ],
@@ -127,9 +127,9 @@ def test_designations_are_read_tolerantly(written, meant):
 @pytest.mark.parametrize(
     ("name", "says"),
     [
-        ("125x75x9 UA", "Did you mean '125x75x"),
+        ("150x90x9 UA", "Did you mean '150x90x"),
         ("150 PFCC", "Did you mean '150 PFC'"),
-        ("nothing like it", "For example '125x75x10 UA'"),
+        ("nothing like it", "For example '150x90x10 UA'"),
     ],
 )
 def test_unknown_designations_name_the_nearest(name, says):
@@ -140,12 +140,12 @@ def test_unknown_designations_name_the_nearest(name, says):
 @pytest.mark.parametrize(
     ("name", "says"),
     [
-        ("2/125x75x10 UA", "states no gap; write it as '2/125x75x10 UA, long legs, gap 12 mm'"),
-        ("2/125x75x10 UA, toes, gap 12 mm", "'toes' in .* says nothing of a pair; write it as"),
+        ("2/150x90x10 UA", "states no gap; write it as '2/150x90x10 UA, long legs, gap 12 mm'"),
+        ("2/150x90x10 UA, toes, gap 12 mm", "'toes' in .* says nothing of a pair; write it as"),
         ("2/150 PFC, legs, gap 12 mm", "facing: got 'long leg'; 150 PFC makes pairs by its web"),
-        ("2/125x75x10 UA, webs, gap 12 mm", "facing: got 'web'; .* by its long leg, short leg"),
+        ("2/150x90x10 UA, webs, gap 12 mm", "facing: got 'web'; .* by its long leg, short leg"),
         ("2/310 UB 40.4, gap 12 mm", "single: 310 UB 40.4 makes no pairs"),
-        ("2/125x75x10 UA, long legs, gap 12", "gap: got '12', a number without a unit"),
+        ("2/150x90x10 UA, long legs, gap 12", "gap: got '12', a number without a unit"),
     ],
 )
 def test_pairs_that_cannot_be_read_say_how_to_write_them(name, says):
@@ -182,11 +182,11 @@ def test_catalogue_columns_are_arrays_in_row_order():
     columns = catalogue()
     area = columns.column("A")
     assert area.shape == (len(ALL),)
-    row = columns.row("125x75x10 UA")
-    assert area[row] == section("125x75x10 UA").A
+    row = columns.row("150x90x10 UA")
+    assert area[row] == section("150x90x10 UA").A
     assert np.isnan(columns.column("b1")[columns.row("150 PFC")])
     assert [columns.row(s) for s in columns.designations] == list(range(len(ALL)))
-    assert columns.column("r_min")[row] == section("125x75x10 UA").r_min
+    assert columns.column("r_min")[row] == section("150x90x10 UA").r_min
     for name in ("A_g", "family", "designation", "outline"):
         with pytest.raises(DataNotFoundError, match=f"column: '{name}' is not listed; there are A"):
             columns.column(name)
@@ -195,7 +195,7 @@ def test_catalogue_columns_are_arrays_in_row_order():
 
 
 def test_pair_by_the_parallel_axis_rule():
-    one = section("125x75x10 UA")
+    one = section("150x90x10 UA")
     pair = double(one, "12 mm", "long leg")
     assert pair.A == 2 * one.A
     assert pair.I_x == pytest.approx(2 * one.I_x)
@@ -239,9 +239,9 @@ def test_dimensions_that_make_no_shape_are_refused(shape, dims, says):
 
 
 def test_elements():
-    angle = section("125x75x10 UA")
-    assert (angle.thickness("long leg"), angle.leg("long leg")) == (9.5, 125.0)
-    assert angle.leg("short leg") == 75.0
+    angle = section("150x90x10 UA")
+    assert (angle.thickness("long leg"), angle.leg("long leg")) == (9.5, 150.0)
+    assert angle.leg("short leg") == 90.0
     channel = section("150 PFC")
     assert (channel.thickness("web"), channel.thickness("flange")) == (6.0, 9.5)
     with pytest.raises(InputError, match="has no 'web'; it has long leg, short leg, leg"):
