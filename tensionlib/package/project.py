@@ -22,7 +22,7 @@ from tensionlib.package.files import (
     project_record,
     read_design_file,
 )
-from tensionlib.quantities import METRIC, View
+from tensionlib.quantities import METRIC, View, format_utilisation
 
 SUMMARY_HEAD = (
     "Mark",
@@ -144,11 +144,34 @@ class CheckedFile:
             ).rstrip()
             for row in rows
         ]
+        return "\n".join([*self._heading(), "", lines[0], rule, *lines[1:], "", *self._closing()])
+
+    def _heading(self) -> list[str]:
+        """What was checked, to which standard, in which revision."""
+        read = self.design_file
+        job = " ".join(filter(None, (read.project.job_number, read.project.title)))
+        revision = f", revision {read.project.revision}" if read.project.revision else ""
+        return [job, f"{read.path.name}{revision}, {read.project.status}, to {read.standard.name}"]
+
+    def _closing(self) -> list[str]:
+        """How many pass, the highest utilisation, and the advice that is exceeded."""
         failing = sum(not calc.passes for calc in self)
         end = f"{len(self)} members: " + (
             "all pass" if not failing else f"{failing} not passing, {len(self) - failing} pass"
         )
-        return "\n".join([lines[0], rule, *lines[1:], "", end])
+        highest = max(self, key=lambda calc: calc.utilisation, default=None)
+        if highest is not None:
+            used = format_utilisation(highest.utilisation)
+            end += f"; highest utilisation {used} ({highest.heading.mark})"
+        advice: dict[str, list[str]] = {}
+        for calc in self:
+            for check in calc:
+                if check.verdict == "advice":
+                    advice.setdefault(check.name, []).append(calc.heading.mark)
+        return [
+            end,
+            *(f"advice exceeded, {name}: {' '.join(marks)}" for name, marks in advice.items()),
+        ]
 
     def _repr_mimebundle_(self, include: Any = None, exclude: Any = None) -> dict[str, Any]:
         head = "".join(f"<th>{escape(cell)}</th>" for cell in SUMMARY_HEAD)
@@ -213,11 +236,10 @@ def _designed(row: MemberRow, standard: str, view: View) -> Calculation:
 
 def _summary(record: dict[str, Any]) -> tuple[str, ...]:
     governing = record["verdict"]["governing"]
-    force = next(i["text"] for i in record["inputs"] if i["symbol"] == "N*")
+    force = record["force"]
     if governing is None:
         check, clause, used = "", "", ""
     else:
-        part = "" if governing["part"] in ("Member", "Net section") else f", {governing['part']}"
-        check, clause, used = governing["name"] + part, governing["clause"], governing["text"]
+        check, clause, used = governing["label"], governing["clause"], governing["text"]
     section = record["subject"].partition(", ")[0]
     return (record["mark"], section, force, check, clause, used, record["verdict"]["word"])

@@ -257,7 +257,7 @@ def _calculation(calculated: Calculated, pieces: _Pieces) -> dict[str, Any]:
         "section": _line(record.get("subject")).partition(", ")[0],
         "force": _force(record),
         "governing": {
-            "name": _line(governing.get("name")),
+            "name": _line(governing.get("label") or governing.get("name")),
             "clause": _line(governing.get("clause")),
             "utilisation": _number(governing.get("utilisation")),
             "utilisation_text": _line(governing.get("text")),

@@ -187,7 +187,7 @@ def _plain_handcalcs(calc, steps) -> float:
             return LatexRenderer("\n".join(sources), dict(scope), dict(config)).render()
 
         assert render().count(r"\mathrm{y") >= len(steps)
-        return best(render, 3, number=1)
+        return best(render, 9, number=1)
 
 
 def arrays(repeat: int) -> list[Row]:

@@ -50,6 +50,7 @@ def of(calc: Calculation) -> Row:
         "subject": heading.subject,
         "standard": _standard(calc),
         "headline": headline(calc),
+        "force": _force(calc),
         "verdict": _verdict(calc),
         "inputs": page.inputs(),
         "parts": page.parts(),
@@ -76,8 +77,7 @@ def headline(calc: Calculation) -> str:
     if heading.force is not None:
         symbol = calc.sheet.lines[heading.force].symbol
         assert symbol is not None
-        force = format_value(calc.values[heading.force], symbol.role, calc.view, SUMMARY_FIGURES)
-        about.append(f"{symbol.text} = {force}")
+        about.append(f"{symbol.text} = {_force(calc)}")
     text = heading.mark + (": " + ", ".join(about) if about else "")
     if not calc.word:
         return text
@@ -95,10 +95,21 @@ def headline(calc: Calculation) -> str:
     )
 
 
+def _force(calc: Calculation) -> str:
+    """The design force as summaries print it; "" for a working without one."""
+    index = calc.heading.force
+    if index is None:
+        return ""
+    symbol = calc.sheet.lines[index].symbol
+    assert symbol is not None
+    return format_value(calc.values[index], symbol.role, calc.view, SUMMARY_FIGURES)
+
+
 def _named(check: Check) -> str:
     """The check's name, with its part where the name alone would not tell."""
-    if check.kind == "strength" and check.part not in ("Member", "Net section", "Bolts", "Welds"):
-        return f"{check.name}, {check.part.lower()}"
+    part = check.part.rpartition(": ")[2]
+    if check.kind == "strength" and part not in ("Member", "Net section", "Bolts", "Welds"):
+        return f"{part[0].lower()}{part[1:]}: {check.name}"
     return check.name
 
 
@@ -119,6 +130,7 @@ def _verdict(calc: Calculation) -> Row:
         else {
             "part": governing.part,
             "name": governing.name,
+            "label": _named(governing),
             "clause": governing.clause,
             "utilisation": _finite(governing.utilisation),
             "text": format_utilisation(governing.utilisation),
@@ -230,11 +242,12 @@ class _Page:
         ]
 
     def notation(self) -> list[Row]:
-        seen: dict[str, Row] = {}
+        seen: dict[tuple[str, str], Row] = {}
         for line in self.lines:
             if symbol := line.symbol:
+                # A user's symbol may print like one of the standard's and mean another thing.
                 seen.setdefault(
-                    symbol.latex,
+                    (symbol.latex, symbol.meaning),
                     {
                         "symbol": symbol.text,
                         "latex": symbol.latex,

@@ -87,7 +87,7 @@ def test_values_checks_and_verdict():
     assert check.utilisation == pytest.approx(100e3 / 302400.0)
     assert calc.passes
     assert calc.word == "PASS"
-    assert "P1: 100x12, N* = 100 kN: PASS, governed by tension, plate (1.1)" in calc.headline
+    assert "P1: 100x12, N* = 100 kN: PASS, governed by plate: tension (1.1)" in calc.headline
 
 
 @pytest.mark.parametrize(

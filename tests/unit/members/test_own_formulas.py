@@ -97,3 +97,20 @@ def test_a_picture_that_lies_is_an_error_at_first_rendering(monkeypatch):
     )
     with pytest.raises(ReadbackError, match="does not hold"):
         calc.record()
+
+
+def test_a_symbol_that_prints_alike_keeps_both_meanings():
+    own = tl.project_notation(
+        tl.Symbol("b", "b", LENGTH, "width of the panel"),
+        tl.Symbol("q", "q", PRESSURE, "pressure"),
+        tl.Symbol("N_star", "N^{*}", FORCE, "design tension force", "N*"),
+    )
+
+    @tl.formula("N_star", own, title="tension", clause="statics")
+    def panel_force(q, b):
+        return q * b * b
+
+    work = tl.Working("Wind", own)
+    N = work.step(panel_force, work.given("q", "1 kPa"), work.given("b", "8 m"))
+    meanings = {row["meaning"] for row in tl.design(BRACE, N).record()["notation"]}
+    assert {"width of the panel", "width, connected element"} <= meanings

@@ -62,14 +62,20 @@ def test_check_prints_the_summary_and_passes(design_file, capsys):
     assert "100x100x10 EA" in out
     assert "bolt shear" in out
     assert "0.900" in out  # 250 kN on 0.8 x 3 x 0.62 x 830 MPa x 225 mm2 = 277.9 kN
-    assert out.rstrip().endswith("2 members: all pass")
+    assert out.startswith("T-1 Two braces\nbraces.toml, draft, to NZS 3404\n")
+    assert out.rstrip().endswith("2 members: all pass; highest utilisation 0.900 (B1)")
 
 
 def test_check_exits_1_when_a_check_fails(design_file, capsys):
     assert main(["check", design_file("300 kN")]) == FAILS
     out = capsys.readouterr().out
     assert "FAIL" in out
-    assert out.rstrip().endswith("2 members: 1 not passing, 1 pass")
+    assert "2 members: 1 not passing, 1 pass; highest utilisation 1.080 (B1)" in out
+
+
+def test_advice_that_is_exceeded_is_told_and_decides_nothing(design_file, capsys):
+    assert main(["check", design_file(text=DESIGN.replace("4.2 m", "9 m"))]) == PASSES
+    assert "advice exceeded, slenderness: B1 B2" in capsys.readouterr().out
 
 
 def test_check_json_has_the_promised_layout(design_file, capsys):
