@@ -320,7 +320,7 @@ def main() -> None:
     parser.add_argument("--quick", action="store_true", help="fewer repeats, no large package")
     parser.add_argument("--write", metavar="FILE", help="also write the table as a page")
     args = parser.parse_args()
-    repeat = 10 if args.quick else 60
+    repeat = 20 if args.quick else 200
     # Before the measuring itself loads it.
     where = machine()
     rows = [

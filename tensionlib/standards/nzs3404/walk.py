@@ -24,7 +24,7 @@ NOT_CHECKED = (
     "block shear of any block but those shown; to the gusset's side edge only where it is stated",
     "shear of a tube's or an element's own wall beside its welds",
     "compression, when the force reverses, in the member and the gussets",
-    "bending from self-weight, lateral load or an eccentricity the correction factor does not cover",
+    "bending from self-weight, lateral load or eccentricity the correction factor does not cover",
     "earthquake: member category, overstrength of the brace and the detailing that follows from it",
     "bolt tension, prying, and slip at serviceability",
     "fatigue, brittle fracture, fire, corrosion and durability",

@@ -266,7 +266,7 @@ def test_a_long_sum_may_go_on_to_the_next_line():
 # Plain data ---------------------------------------------------------------------------------
 
 KEYS = {
-    "": "format version kind mark title subject standard headline verdict inputs parts checks"
+    "": "format version kind mark title subject standard headline force verdict inputs parts checks"
     " assumptions not_checked notation sources sketches values provenance",
     "standard": "name short key",
     "verdict": "passes word governing",
