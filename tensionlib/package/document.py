@@ -151,9 +151,15 @@ def identity(record: Record) -> tuple[str, str]:
 
 
 def read(
-    notebook: Mapping[str, Any], name: str = "notebook", folder: Path | None = None
+    notebook: Mapping[str, Any],
+    name: str = "notebook",
+    folder: Path | None = None,
+    *,
+    attach: bool = True,
 ) -> Document:
     """The document an executed notebook (nbformat 4) makes.
+
+    `attach` False leaves the files out, for who only asks what the notebook says.
 
     Raises
     ------
@@ -183,7 +189,7 @@ def read(
         folder=folder,
         blocks=tuple(blocks),
         project=_project(projects),
-        attachments=_attachments(notebook, name, folder, blocks, projects),
+        attachments=_attachments(notebook, name, folder, blocks, projects) if attach else (),
     )
 
 

@@ -88,7 +88,7 @@ def issue(
         reason = str(error).splitlines()[0][:200]
         raise InputError(f"notebook: {source.name} is not a notebook: {reason}") from None
     executed = execute(notebook, source.parent, source.name, progress)
-    failing = read(executed, source.stem, source.parent).failing
+    failing = read(executed, source.stem, source.parent, attach=False).failing
     if failing and not allow_failing:
         raise NotPassingError(failing)
     exporter = exporter_class(paper=paper or "")

@@ -309,6 +309,8 @@ of times taken in the same run. The aims are the project's own, and no test fail
   quantities: {_FORMULAS_ONLY}.
 - A package is executed in a kernel of its own; most of its time for few members is the start of
   interpreter, kernel and typesetter.
+- Packages are timed in the environment this ran in. One that holds JupyterLab too takes some two
+  seconds more to import nbformat, whose validator then builds a large grammar.
 """
 
 
