@@ -7,7 +7,7 @@ is printed as an assumption by the calculation.
 from __future__ import annotations
 
 from dataclasses import dataclass, fields
-from typing import Any, ClassVar
+from typing import Any, ClassVar, cast
 
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.quantities import LENGTH, Quantity, count, door, factor
@@ -19,6 +19,11 @@ EDGES = ("sheared", "machine cut", "rolled")
 BOLTED_TO = ("long leg", "short leg", "leg", "web", "flange", "both flanges", "plate")
 WELDED_TO = (*BOLTED_TO, "slot", "bar")
 QUALITIES = ("SP", "GP")
+
+
+def in_mm(length: Any) -> float:
+    """A length field of an end, which the door has made a quantity, in mm; 0 where left out."""
+    return 0.0 if length is None else float(length.internal)
 
 
 def _choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
@@ -63,7 +68,7 @@ class _Stated:
         InputError
             For a name that is not a field.
         """
-        names = [f.name for f in fields(self)]  # type: ignore[arg-type]
+        names = [f.name for f in fields(cast(Any, self))]
         for name in changes:
             if name not in names:
                 raise InputError(
@@ -198,7 +203,7 @@ class Bolted(_Stated):
             raise InputError(
                 "line_spacing: missing; two lines of bolts need it, for example '60 mm'"
             )
-        if self.lines == 1 and self.stagger is not None and self.stagger.internal > 0.0:  # type: ignore[union-attr]
+        if self.lines == 1 and in_mm(self.stagger) > 0.0:
             raise InputError("stagger: given for one line of bolts; it needs lines=2")
         if self.lines == 1 and self.line_spacing is not None:
             raise InputError("line_spacing: given for one line of bolts; it needs lines=2")

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, End
+from tensionlib.joints.ends import Bolted, End, in_mm
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section
 
@@ -99,7 +99,7 @@ def seat(section: Section, end: End) -> Seat:
 def _check_gap(section: Section, end: End) -> None:
     """A pair's gap is the gusset's thickness: no less, and no packing plates."""
     gap = section.dims.get("gap")
-    plate = float(end.plate.thickness.internal)  # type: ignore[union-attr]
+    plate = in_mm(end.plate.thickness)
     if gap is not None and not plate <= gap <= plate + _LOOSE:
         raise InputError(
             f"plate.thickness: got {plate:g} mm in the gap of {section.designation}; a gusset as"

@@ -3,12 +3,11 @@
 from __future__ import annotations
 
 from functools import cache
-from typing import Any
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, End, Gusset, Welded
+from tensionlib.joints.ends import Bolted, End, Gusset, Welded, in_mm
 from tensionlib.members.geometry import Seat, seat
 from tensionlib.members.member import Member
 from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
@@ -24,7 +23,7 @@ def member_inputs(member: Member) -> Inputs:
     source = section.source
     numbers = {
         "A_g": Number(section.A, source),
-        "L": Number(_length(member.length), _STATED),
+        "L": Number(in_mm(member.length), _STATED),
         "t_y": Number(_thickest(section), source),
     }
     if section.r_min is not None:
@@ -71,11 +70,6 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
     return Inputs(choices | also, common | more, tables, prefix)
 
 
-def _length(value: Any) -> float:
-    """The length of an end's or member's field, which the door has made a quantity, in mm."""
-    return float(value.internal)
-
-
 def _thickest(section: Section) -> float:
     """Thickness that sets the yield stress: the thickest element, the conservative reading."""
     sizes = [section.dims[n] for n in ("t", "t_f", "t_w") if n in section.dims]
@@ -90,9 +84,9 @@ def _thickest(section: Section) -> float:
 
 
 def _plate(plate: Gusset) -> dict[str, Number]:
-    numbers = {"t_p": Number(_length(plate.thickness), _STATED)}
+    numbers = {"t_p": Number(in_mm(plate.thickness), _STATED)}
     if plate.width is not None:
-        numbers["b_p"] = Number(_length(plate.width), _STATED)
+        numbers["b_p"] = Number(in_mm(plate.width), _STATED)
     return numbers
 
 
@@ -124,10 +118,10 @@ def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]
         "n_x": planes,
         "n_l": Number(float(end.lines), _STATED),
         "n_p": Number(float(end.per_line), _STATED),
-        "e_1": Number(_length(end.end_distance), _STATED),
-        "e_p": Number(_length(end.end_distance), "taken as the member's end distance")
+        "e_1": Number(in_mm(end.end_distance), _STATED),
+        "e_p": Number(in_mm(end.end_distance), "taken as the member's end distance")
         if end.plate_end_distance is None
-        else Number(_length(end.plate_end_distance), _STATED),
+        else Number(in_mm(end.plate_end_distance), _STATED),
     }
     stated = {
         "s_p": end.pitch if end.per_line > 1 else None,
@@ -136,10 +130,10 @@ def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]
         "e_s": end.plate_edge_distance,
         "c_h": end.clearance,
     }
-    numbers |= {n: Number(_length(v), _STATED) for n, v in stated.items() if v is not None}
-    staggered = end.stagger is not None and _length(end.stagger) > 0.0
+    numbers |= {n: Number(in_mm(v), _STATED) for n, v in stated.items() if v is not None}
+    staggered = end.stagger is not None and in_mm(end.stagger) > 0.0
     if staggered:
-        numbers["s_2"] = Number(_length(end.stagger), _STATED)
+        numbers["s_2"] = Number(in_mm(end.stagger), _STATED)
     choices = {
         "pattern": "staggered" if staggered else "straight",
         "threads": end.threads,
@@ -154,14 +148,14 @@ def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]
 def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
     metal = weld_metal(end.metal)
     numbers = {
-        "t_w": Number(_length(end.leg_size), _STATED),
-        "l_1": Number(_length(end.length_1), _STATED),
-        "l_2": Number(_length(end.length_2), _STATED),
+        "t_w": Number(in_mm(end.leg_size), _STATED),
+        "l_1": Number(in_mm(end.length_1), _STATED),
+        "l_2": Number(in_mm(end.length_2), _STATED),
         "f_uw": Number(metal.f_uw, metal.source),
     }
     if end.transverse is not None:
-        numbers["l_t"] = Number(_length(end.transverse), _STATED)
+        numbers["l_t"] = Number(in_mm(end.transverse), _STATED)
     if end.to == "slot":
         numbers["n_s"] = Number(2.0, _COUNTED)
-        numbers["c_s"] = Number(_length(end.slot_clearance), _STATED)
+        numbers["c_s"] = Number(in_mm(end.slot_clearance), _STATED)
     return numbers, {"quality": end.quality}

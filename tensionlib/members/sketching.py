@@ -2,10 +2,8 @@
 
 from __future__ import annotations
 
-from typing import Any
-
 from tensionlib.calculation.result import Sketch
-from tensionlib.joints.ends import Bolted, End, Welded
+from tensionlib.joints.ends import Bolted, End, Welded, in_mm
 from tensionlib.joints.sketch import EndView, describe, sketch_end
 from tensionlib.joints.svg import to_svg
 from tensionlib.members.geometry import Seat, seat
@@ -38,24 +36,20 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
     return _welded(section, end, place, force)
 
 
-def _mm(length: Any) -> float:
-    return 0.0 if length is None else float(length.internal)
-
-
 def _plate_width(end: End, lines_apart: float, joint: float, width: float) -> float:
     """The gusset's stated width, or one that looks the part: wider than what it takes hold of."""
     if end.plate.width is not None:
-        return _mm(end.plate.width)
+        return in_mm(end.plate.width)
     return max(1.15 * width, lines_apart + _SPREAD * joint)
 
 
 def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float) -> EndView:
     fastener = bolt(end.bolts)
-    pitch, first = _mm(end.pitch), _mm(end.end_distance)
-    apart = _mm(end.line_spacing) if end.lines == 2 else 0.0
-    stagger = _mm(end.stagger)
+    pitch, first = in_mm(end.pitch), in_mm(end.end_distance)
+    apart = in_mm(end.line_spacing) if end.lines == 2 else 0.0
+    stagger = in_mm(end.stagger)
     if place.lines_from == "heel":
-        lines = [_mm(end.gauge), _mm(end.gauge) + apart]
+        lines = [in_mm(end.gauge), in_mm(end.gauge) + apart]
     else:
         lines = [(place.width - apart) / 2, (place.width + apart) / 2]
     lines = lines[: end.lines]
@@ -66,7 +60,7 @@ def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float)
     )
     xs = sorted({x for x, _ in holes})
     last = xs[-1]
-    edge = last + _mm(
+    edge = last + in_mm(
         end.plate_end_distance if end.plate_end_distance is not None else end.end_distance
     )
     net = tuple((max(x for x, y in holes if y == line), line) for line in lines)
@@ -78,13 +72,13 @@ def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float)
         element=place.element,
         width=place.width,
         thickness=place.thickness,
-        plate_thickness=_mm(end.plate.thickness),
+        plate_thickness=in_mm(end.plate.thickness),
         plate_end=edge,
         plate_width=_plate_width(end, apart, last - first, place.width),
         force=force,
         notes=(
             section.designation.partition(",")[0],
-            f"gusset {_mm(end.plate.thickness):g} mm",
+            f"gusset {in_mm(end.plate.thickness):g} mm",
             count,
             f"holes {hole:g} mm",
         ),
@@ -98,10 +92,10 @@ def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float)
 
 
 def _welded(section: Section, end: Welded, place: Seat, force: str) -> EndView:
-    l_1, l_2, b = _mm(end.length_1), _mm(end.length_2), place.width
+    l_1, l_2, b = in_mm(end.length_1), in_mm(end.length_2), place.width
     welds = [(0.0, 0.0, l_1, 0.0), (0.0, b, l_2, b)]
     if end.transverse is not None:
-        welds.append((0.0, 0.0, 0.0, min(_mm(end.transverse), b)))
+        welds.append((0.0, 0.0, 0.0, min(in_mm(end.transverse), b)))
     runs = ("on both faces",) if end.to in ("slot", "bar") else ()
     along = ((0.0, l_1),) if l_1 == l_2 else ((0.0, l_1), (0.0, l_2))
     return EndView(
@@ -110,19 +104,19 @@ def _welded(section: Section, end: Welded, place: Seat, force: str) -> EndView:
         element=place.element,
         width=b,
         thickness=place.thickness,
-        plate_thickness=_mm(end.plate.thickness),
+        plate_thickness=in_mm(end.plate.thickness),
         plate_end=max(l_1, l_2) + 10.0,
         plate_width=_plate_width(end, b, min(l_1, l_2), b),
         force=force,
         notes=(
             section.designation.partition(",")[0],
-            f"gusset {_mm(end.plate.thickness):g} mm",
-            f"{_mm(end.leg_size):g} mm fillets",
+            f"gusset {in_mm(end.plate.thickness):g} mm",
+            f"{in_mm(end.leg_size):g} mm fillets",
             *runs,
             f"{end.quality}, {end.metal}",
         ),
         welds=tuple(welds),
-        leg_size=_mm(end.leg_size),
+        leg_size=in_mm(end.leg_size),
         along=along,
         across=(0.0, b),
     )
