@@ -78,6 +78,13 @@ def shear_threads_out(f_uf: Any, k_r: Any, n_x: Any, A_o: Any) -> Any:
     return 0.62 * f_uf * k_r * n_x * A_o
 
 
+@formula("N_tf", NZS, title="tension capacity of a bolt", clause="9.3.2.2")
+def bolt_tension(A_s: Any, f_uf: Any) -> Any:
+    """Nominal tension capacity of a bolt [force]. 9.3.2.2. No end on offer puts a bolt in tension;
+    the formula stands here for a user's own working."""
+    return A_s * f_uf
+
+
 @formula("phiV_f", NZS, title="design shear capacity of the bolts", clause="9.3.2.1")
 def design_shear(phi: Any, n_b: Any, V_f: Any) -> Any:
     """Design shear capacity of the bolts, sharing the force equally [force]. 9.3.2.1, 9.4."""

@@ -70,6 +70,8 @@ NZS = Notation(
         Symbol("d_h", "d_{h}", LENGTH, "diameter of the hole"),
         Symbol("A_c", "A_{c}", AREA, "core area of the bolt"),
         Symbol("A_o", "A_{o}", AREA, "shank area of the bolt"),
+        Symbol("A_s", "A_{s}", AREA, "tensile stress area of the bolt"),
+        Symbol("N_tf", "N_{tf}", FORCE, "nominal tension capacity of a bolt"),
         Symbol("f_uf", "f_{uf}", STRESS, "tensile strength of the bolt"),
         Symbol("s_p", "s_{p}", LENGTH, "pitch"),
         Symbol("s_g", "s_{g}", LENGTH, "spacing of the lines across the force"),
