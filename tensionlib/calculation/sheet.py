@@ -108,6 +108,7 @@ class Upto(Line):
     table: ThresholdTable
     row: str
     by: int
+    source: str
 
     def evaluate(self, values: Values) -> Any:
         return self.table.read(self.row, values[self.by])

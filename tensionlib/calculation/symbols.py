@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass
 
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
@@ -46,6 +46,10 @@ class Symbol:
             object.__setattr__(self, "text", self.name)
 
 
+def _as_numbered(clause: str) -> str:
+    return clause
+
+
 class Notation:
     """The symbols of one standard, one calculation or one project: one meaning a symbol.
 
@@ -54,6 +58,8 @@ class Notation:
     source : Source
         What the formulas written in this notation come from.
     symbols : iterable of Symbol
+    cite : callable, optional
+        How a clause of the common formulas is numbered here; the same number unless given.
 
     Raises
     ------
@@ -61,8 +67,15 @@ class Notation:
         When two symbols share a name or a LaTeX form: a reader could not tell them apart.
     """
 
-    def __init__(self, source: Source, symbols: Iterable[Symbol]) -> None:
+    def __init__(
+        self,
+        source: Source,
+        symbols: Iterable[Symbol],
+        *,
+        cite: Callable[[str], str] | None = None,
+    ) -> None:
         self.source = source
+        self.cite = cite or _as_numbered
         self._symbols: dict[str, Symbol] = {}
         seen: dict[str, str] = {}
         for symbol in symbols:

@@ -165,7 +165,7 @@ class Working:
             part=self._part,
             symbol=symbol,
             title=title or formula.title,
-            clause=formula.clause if clause is None else clause,
+            clause=self.notation.cite(formula.clause if clause is None else clause),
             note=note,
             formula=formula,
             args=indices,
@@ -188,10 +188,10 @@ class Working:
             part=self._part,
             symbol=symbol,
             title=title or symbol.meaning,
-            clause=clause,
+            clause=self.notation.cite(clause),
             note=note,
             value=float(value),
-            source=source,
+            source=self.notation.cite(source),
         )
         return self._add(line)
 
@@ -212,10 +212,11 @@ class Working:
             part=self._part,
             symbol=symbol,
             title=title or symbol.meaning,
-            clause=clause,
+            clause=self.notation.cite(clause),
             table=table,
             row=row,
             by=index,
+            source=self.notation.cite(table.source),
         )
         return self._add(line)
 
@@ -239,7 +240,7 @@ class Working:
         line = Holds(
             part=self._part,
             title=condition.title,
-            clause=clause or condition.clause,
+            clause=self.notation.cite(clause or condition.clause),
             condition=condition,
             args=indices,
             decision=decision,
@@ -275,7 +276,7 @@ class Working:
         line = CheckLine(
             part=self._part,
             title=name,
-            clause=clause,
+            clause=self.notation.cite(clause),
             note=note,
             demand=first,
             capacity=second,
@@ -285,10 +286,11 @@ class Working:
 
     def note(self, text: str, clause: str = "") -> None:
         """Words between the lines."""
-        self._append(Note(part=self._part, title=text, clause=clause), None)
+        self._append(Note(part=self._part, title=text, clause=self.notation.cite(clause)), None)
 
     def not_covered(self, name: str, why: str, clause: str) -> None:
         """A check that is not offered: the verdict of the whole becomes "not covered"."""
+        clause = self.notation.cite(clause)
         self._append(NotCovered(part=self._part, title=name, clause=clause, note=why), None)
 
     def assume(self, text: str) -> None:
@@ -346,7 +348,12 @@ class Working:
                 )
         indices = self._indices(symbol.text, [entry.symbol.text for entry in args], args)
         line = Extreme(
-            part=self._part, symbol=symbol, title=title, clause=clause, args=indices, least=least
+            part=self._part,
+            symbol=symbol,
+            title=title,
+            clause=self.notation.cite(clause),
+            args=indices,
+            least=least,
         )
         return self._add(line)
 

@@ -55,7 +55,7 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
         **_plate(end.plate),
     }
     if end.k_te is not None:
-        common["k_te"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
+        common["k_t"] = Number(end.k_te, f"stated by the engineer: {end.k_te_reason}")
     # Either leg of an equal angle is the same leg.
     equal = section.shape == "angle" and section.dims["b1"] == section.dims["b2"]
     to = "leg" if equal else end.to

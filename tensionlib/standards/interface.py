@@ -18,13 +18,17 @@ class Standard:
     """A standard: its key (the folder's name), its notation, and its walk for a tension member.
 
     `hole_clearance` gives the clearance of a standard hole for a bolt diameter, both in mm.
-    The notation holds at least the symbol N_star, the design tension force.
+    The notation holds at least the symbol N_star, the design tension force. `edition` is what a
+    user writes behind the name to ask for this one ("1997"); `others` are the other editions on
+    offer.
     """
 
     key: str
     notation: Notation
     design: Walk
     hole_clearance: Callable[[float], float]
+    edition: str = ""
+    others: tuple[Standard, ...] = ()
 
     @property
     def source(self) -> Source:

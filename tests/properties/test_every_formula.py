@@ -93,7 +93,7 @@ def test_homogeneous(formula: Formula):
 
 def test_homogeneity_catches_a_hidden_unit():
     """The rescaling finds a bare number that hides a unit."""
-    from tensionlib.standards.nzs3404 import bolts
+    from tensionlib.standards.common_as_nzs import bolts
 
     def planted(L_j):
         return 1.075 - L_j / 4000.0

@@ -14,7 +14,8 @@ from __future__ import annotations
 
 import pytest
 
-from tensionlib.standards.nzs3404 import factors, welds
+from tensionlib.standards.common_as_nzs import welds
+from tensionlib.standards.nzs3404.rules import FACTORS
 from tensionlib.steel import weld_metal
 from tests.printed import agrees
 
@@ -34,5 +35,5 @@ PUBLISHED = [
 @pytest.mark.parametrize(("quality", "metal", "leg", "published"), PUBLISHED)
 def test_capacity_of_a_millimetre_of_fillet(quality, metal, leg, published):
     v_w = welds.fillet(weld_metal(metal).f_uw, welds.throat(leg), 1.0)
-    one = welds.design_fillet(factors.FILLET_WELD[quality], v_w, 1.0)
+    one = welds.design_fillet(FACTORS.fillet[quality], v_w, 1.0)
     assert agrees(one / 1e3, published)

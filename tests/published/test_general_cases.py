@@ -19,7 +19,7 @@ from __future__ import annotations
 import pytest
 
 from tensionlib.quantities import parse
-from tensionlib.standards.nzs3404 import tension, welds
+from tensionlib.standards.common_as_nzs import tension, welds
 from tests.printed import agrees
 
 

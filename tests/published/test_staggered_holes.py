@@ -17,7 +17,7 @@ from __future__ import annotations
 
 import pytest
 
-from tensionlib.standards.nzs3404 import gusset, tension
+from tensionlib.standards.common_as_nzs import gusset, tension
 from tests.printed import agrees
 
 IN = 25.4

@@ -378,7 +378,7 @@ class _Page:
             said.append(
                 f"{'up to' if bands[which].closed else 'under'} {write(bands[which].limit)}"
             )
-        return {"note": f"{line.row}: {', '.join(said)} ({line.table.source})"}
+        return {"note": f"{line.row}: {', '.join(said)} ({line.source})"}
 
     def write_extreme(self, index: int, line: Extreme) -> Row:
         if len(line.args) == 1:

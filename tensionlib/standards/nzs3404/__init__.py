@@ -2,8 +2,17 @@
 
 from __future__ import annotations
 
+from functools import partial
+
+from tensionlib.standards.common_as_nzs.walk import design, hole_clearance
 from tensionlib.standards.interface import Standard
 from tensionlib.standards.nzs3404.notation import NZS
-from tensionlib.standards.nzs3404.walk import design, hole_clearance
+from tensionlib.standards.nzs3404.rules import RULES
 
-STANDARD = Standard(key="nzs3404", notation=NZS, design=design, hole_clearance=hole_clearance)
+STANDARD = Standard(
+    key="nzs3404",
+    notation=NZS,
+    design=partial(design, RULES),
+    hole_clearance=hole_clearance,
+    edition="1997",
+)

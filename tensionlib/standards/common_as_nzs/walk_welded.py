@@ -1,4 +1,4 @@
-"""The walk through NZS 3404 for a welded end: welds, gusset, weld limits."""
+"""The walk of AS 4100 and NZS 3404 for a welded end: welds, gusset, weld limits."""
 
 from __future__ import annotations
 
@@ -6,8 +6,9 @@ from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.calculation.working import Working
-from tensionlib.standards.nzs3404 import factors, gusset, welds
-from tensionlib.standards.nzs3404.walk_gusset import check_gusset
+from tensionlib.standards.common_as_nzs import gusset, welds
+from tensionlib.standards.common_as_nzs.rules import Factors, Rules
+from tensionlib.standards.common_as_nzs.walk_gusset import check_gusset
 
 LEGS = ThresholdTable(
     "least leg of a fillet weld",
@@ -17,16 +18,16 @@ LEGS = ThresholdTable(
 LAP_CLAUSE = "Table 9.7.3.10(2)"
 
 
-def welded_end(work: Working, end: Inputs, N_c: Entry) -> None:
+def welded_end(rules: Rules, work: Working, end: Inputs, N_c: Entry) -> None:
     """Write the checks of a welded end for the design action on the connection."""
     label = end.choice("label")
     with work.part(label + "Welds"):
-        _welds(work, end, N_c)
+        _welds(rules.factors, work, end, N_c)
     with work.part(label + "Gusset"):
         t_p = end.take(work, "t_p")
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
         b_d = work.step(gusset.spread_welds, end.take(work, "b"), shorter_run(work, end))
-        check_gusset(work, end, N_c, b_d, f_yp, f_up)
+        check_gusset(rules.factors, work, end, N_c, b_d, f_yp, f_up)
     with work.part(label + "Weld limits"):
         _limits(work, end)
 
@@ -45,12 +46,12 @@ def _run(work: Working, end: Inputs, which: str) -> Entry:
     return end.keep(which, pick(which, *runs, title=title))
 
 
-def _welds(work: Working, end: Inputs, N_c: Entry) -> None:
+def _welds(factors: Factors, work: Working, end: Inputs, N_c: Entry) -> None:
     quality = end.choice("quality")
     phi = work.fixed(
         "phi",
-        factors.FILLET_WELD[quality],
-        factors.CLAUSE,
+        factors.fillet[quality],
+        factors.clause,
         note=f"fillet weld of quality {quality}",
     )
     t_t = work.step(welds.throat, end.take(work, "t_w"))

@@ -8,7 +8,8 @@ from tensionlib.calculation.formula import Formula
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
-from tensionlib.standards.nzs3404 import block
+from tensionlib.standards.common_as_nzs import block
+from tensionlib.standards.common_as_nzs.rules import BlockRule
 
 
 @dataclass(frozen=True)
@@ -65,41 +66,41 @@ class Ply:
 
 
 def check_blocks(
-    work: Working, end: Inputs, N_c: Entry, blocks: tuple[Block, ...], ply: Ply
+    rule: BlockRule,
+    work: Working,
+    end: Inputs,
+    N_c: Entry,
+    blocks: tuple[Block, ...],
+    ply: Ply,
 ) -> None:
     """Write a check for each block."""
-    for i, each in enumerate(blocks):
-        _check_block(work, end, N_c, each, ply, first=i == 0)
+    if blocks:
+        work.note(rule.note, rule.clause)
+    for each in blocks:
+        _check_block(rule, work, end, N_c, each, ply)
 
 
 def _check_block(
-    work: Working, end: Inputs, N_c: Entry, each: Block, ply: Ply, *, first: bool
+    rule: BlockRule, work: Working, end: Inputs, N_c: Entry, each: Block, ply: Ply
 ) -> None:
-    if first:
-        work.note(
-            "Block shear: NZS 3404:1997 as remembered has no rule of its own; the form and the"
-            " factor of AS 4100:2020 9.1.9 are used, from memory."
-        )
+    clause = rule.clause
 
-    def named(symbol: str) -> str:
-        return symbol + ply.suffix
+    def line(formula: Formula, gives: str, *args: Entry) -> Entry:
+        return work.step(formula, *args, gives=gives + ply.suffix, clause=clause)
 
-    n_p, d_h = end.take(work, "n_p"), end.kept_line("d_h")
+    t, n_p, d_h = ply.thickness, end.take(work, "n_p"), end.kept_line("d_h")
     L_v = _shear_length(work, end, ply, n_p)
-    n_v = work.fixed("n_v", each.planes, block.CLAUSE, note=each.name)
-    A_gv = work.step(block.gross_shear, ply.plies, n_v, L_v, ply.thickness, gives=named("A_gv"))
-    A_nv = work.step(
-        block.net_shear, ply.plies, n_v, L_v, n_p, d_h, ply.thickness, gives=named("A_nv")
-    )
-    b_t = work.step(each.width, *(_read(work, end, name, ply) for name in each.reads))
-    A_nt = work.step(block.net_tension, ply.plies, b_t, ply.thickness, gives=named("A_nt"))
-    k_bs = work.fixed("k_bs", block.UNIFORM, block.CLAUSE, note="tension taken as uniform")
-    N_bs = work.step(
-        block.block_shear, ply.f_u, A_nv, ply.f_y, A_gv, k_bs, A_nt, gives=named("N_bs")
-    )
-    phi = work.fixed("phi", block.PHI, block.CLAUSE, note="block shear", source=block.KNOWN)
-    capacity = work.step(block.design_block, phi, N_bs, gives=named("phiN_bs"))
-    work.check(each.name, N_c, capacity, block.CLAUSE)
+    n_v = work.fixed("n_v", each.planes, clause, note=each.name)
+    A_gv = line(block.gross_shear, "A_gv", ply.plies, n_v, L_v, t)
+    A_nv = line(block.net_shear, "A_nv", ply.plies, n_v, L_v, n_p, d_h, t)
+    reads = [_read(work, end, name, ply) for name in each.reads]
+    b_t = work.step(each.width, *reads, clause=clause)
+    A_nt = line(block.net_tension, "A_nt", ply.plies, b_t, t)
+    k_bs = work.fixed("k_bs", block.UNIFORM, clause, note="tension taken as uniform")
+    N_bs = line(block.block_shear, "N_bs", ply.f_u, A_nv, ply.f_y, A_gv, k_bs, A_nt)
+    phi = work.fixed("phi", rule.phi, clause, note="block shear", source=rule.known)
+    capacity = line(block.design_block, "phiN_bs", phi, N_bs)
+    work.check(each.name, N_c, capacity, clause)
 
 
 def _shear_length(work: Working, end: Inputs, ply: Ply, n_p: Entry) -> Entry:

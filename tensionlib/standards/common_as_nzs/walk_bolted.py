@@ -1,4 +1,4 @@
-"""The walk through NZS 3404 for a bolted end: bolts, plies, gusset, distances."""
+"""The walk of AS 4100 and NZS 3404 for a bolted end: bolts, plies, gusset, distances."""
 
 from __future__ import annotations
 
@@ -6,21 +6,24 @@ from tensionlib.calculation.formula import Formula
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
-from tensionlib.standards.nzs3404 import bolts, detailing, factors, gusset
-from tensionlib.standards.nzs3404.walk_block import (
+from tensionlib.standards.common_as_nzs import bolts, detailing, gusset
+from tensionlib.standards.common_as_nzs.rules import Rules
+from tensionlib.standards.common_as_nzs.walk_block import (
     Ply,
     check_blocks,
     gusset_blocks,
     member_blocks,
 )
-from tensionlib.standards.nzs3404.walk_gusset import check_gusset
+from tensionlib.standards.common_as_nzs.walk_gusset import check_gusset
 
 
-def bolted_end(work: Working, end: Inputs, N_c: Entry, f_y: Entry, f_u: Entry) -> None:
+def bolted_end(
+    rules: Rules, work: Working, end: Inputs, N_c: Entry, f_y: Entry, f_u: Entry
+) -> None:
     """Write the checks of a bolted end for the design action on the connection."""
     label = end.choice("label")
     with work.part(label + "Bolts"):
-        _bolts_in_shear(work, end, N_c)
+        _bolts_in_shear(rules, work, end, N_c)
         if end.choice("category") == "TF":
             work.not_covered(
                 "slip",
@@ -29,19 +32,21 @@ def bolted_end(work: Working, end: Inputs, N_c: Entry, f_y: Entry, f_u: Entry) -
                 "9.3.3",
             )
     with work.part(label + "Member at the bolts"):
-        _member_plies(work, end, N_c, f_u)
+        _member_plies(rules, work, end, N_c, f_u)
         if blocks := member_blocks(end):
             if end.choice("side_edge") != "none":
                 end.keep("e_2", _side_distance(work, end))
             n_e, e_1, t = (end.take(work, name) for name in ("n_e", "e_1", "t"))
-            check_blocks(work, end, N_c, blocks, Ply(n_e, e_1, t, f_y, f_u, "e_2", ""))
+            ply = Ply(n_e, e_1, t, f_y, f_u, "e_2", "")
+            check_blocks(rules.block, work, end, N_c, blocks, ply)
     with work.part(label + "Gusset"):
         t_p = end.take(work, "t_p")
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
-        _gusset_plies(work, end, N_c, t_p, f_up)
-        check_gusset(work, end, N_c, _spread(work, end), f_yp, f_up)
+        _gusset_plies(rules, work, end, N_c, t_p, f_up)
+        check_gusset(rules.factors, work, end, N_c, _spread(work, end), f_yp, f_up)
         n_g, e_p = end.take(work, "n_g"), end.take(work, "e_p")
-        check_blocks(work, end, N_c, gusset_blocks(end), Ply(n_g, e_p, t_p, f_yp, f_up, "e_s", "p"))
+        ply = Ply(n_g, e_p, t_p, f_yp, f_up, "e_s", "p")
+        check_blocks(rules.block, work, end, N_c, gusset_blocks(end), ply)
     with work.part(label + "Bolt distances"):
         _distances(work, end)
 
@@ -62,8 +67,8 @@ def joint_length(work: Working, end: Inputs) -> Entry | None:
     return end.keep("L_j", work.step(bolts.joint_length, n_p, s_p))
 
 
-def _bolts_in_shear(work: Working, end: Inputs, N_c: Entry) -> None:
-    phi = work.fixed("phi", factors.BOLT, factors.CLAUSE, note="bolt in shear")
+def _bolts_in_shear(rules: Rules, work: Working, end: Inputs, N_c: Entry) -> None:
+    phi = work.fixed("phi", rules.factors.bolt, rules.factors.clause, note="bolt in shear")
     k_r = _joint_factor(work, end)
     f_uf = end.take(work, "f_uf")
     if end.choice("threads") == "in shear plane":
@@ -104,12 +109,12 @@ def _least_clear(work: Working, end: Inputs, distance: str, symbols: tuple[str, 
     return work.least(least, ahead, between, title="least clear length", clause="9.3.2.4")
 
 
-def _member_plies(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
-    phi = work.fixed("phi", factors.PLY_IN_BEARING, factors.CLAUSE, note="ply in bearing")
-    C_1 = _bearing_factor(work)
+def _member_plies(rules: Rules, work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
+    phi = work.fixed("phi", rules.factors.ply, rules.factors.clause, note="ply in bearing")
     d_f, t = end.take(work, "d_f"), end.take(work, "t")
     a_e = _least_clear(work, end, "e_1", ("a_e1", "a_e2", "a_e"))
-    bearing = work.step(bolts.ply_bearing, C_1, d_f, t, f_u)
+    title = "bearing of the ply at a bolt"
+    bearing = rules.bearing(work, d_f, t, f_u, "V_bb", title)
     tear_out = work.step(bolts.ply_tear_out, a_e, t, f_u)
     V_b = work.least("V_b", bearing, tear_out, title="capacity of the ply at a bolt")
     count = [end.take(work, name) for name in ("n_e", "n_l", "n_p")]
@@ -117,29 +122,13 @@ def _member_plies(work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
     work.check("ply bearing and tear-out", N_c, capacity, "9.3.2.4")
 
 
-def _bearing_factor(work: Working) -> Entry:
-    return work.fixed(
-        "C_1",
-        bolts.BEARING_FACTOR,
-        "9.3.2.4",
-        note="no earthquake action; values for earthquake or thin plies are not covered",
-        source="9.3.2.4, from memory, fairly sure",
-    )
-
-
-def _gusset_plies(work: Working, end: Inputs, N_c: Entry, t_p: Entry, f_up: Entry) -> None:
-    phi = work.fixed("phi", factors.PLY_IN_BEARING, factors.CLAUSE, note="ply in bearing")
-    C_1 = _bearing_factor(work)
+def _gusset_plies(
+    rules: Rules, work: Working, end: Inputs, N_c: Entry, t_p: Entry, f_up: Entry
+) -> None:
+    phi = work.fixed("phi", rules.factors.ply, rules.factors.clause, note="ply in bearing")
     a_p = _least_clear(work, end, "e_p", ("a_p1", "a_p2", "a_p"))
-    bearing = work.step(
-        bolts.ply_bearing,
-        C_1,
-        end.take(work, "d_f"),
-        t_p,
-        f_up,
-        gives="V_pb",
-        title="bearing of the gusset at a bolt",
-    )
+    d_f, title = end.take(work, "d_f"), "bearing of the gusset at a bolt"
+    bearing = rules.bearing(work, d_f, t_p, f_up, "V_pb", title)
     tear_out = work.step(
         bolts.ply_tear_out, a_p, t_p, f_up, gives="V_pt", title="tear-out of the gusset at a bolt"
     )

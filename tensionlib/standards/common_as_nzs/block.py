@@ -1,10 +1,9 @@
 """Block shear of regular patterns, as practised.
 
-NZS 3404:1997 as remembered has no explicit rule for block shear. The form used is that of
-AS 4100:2020 9.1.9 with its capacity factor of 0.75, both from memory, fairly sure: the lesser of
-shear fracture on the net and shear yielding on the gross shear area, plus fracture on the net
-tension area, the tension taken as uniform (k_bs = 1.0). Shapes: floats or arrays (n,); units N,
-mm, MPa.
+The form of AS 4100:2020 9.1.9, from memory, fairly sure: the lesser of shear fracture on the net
+and shear yielding on the gross shear area, plus fracture on the net tension area, the tension
+taken as uniform (k_bs = 1.0). NZS 3404:1997 as remembered has no rule of its own and practice
+takes this one. Shapes: floats or arrays (n,); units N, mm, MPa.
 """
 
 from __future__ import annotations
@@ -13,73 +12,72 @@ from typing import Any
 
 from tensionlib.calculation.dispatch import minimum
 from tensionlib.calculation.formula import formula
-from tensionlib.standards.nzs3404.notation import NZS
+from tensionlib.standards.common_as_nzs.symbols import COMMON
 
-PHI = 0.75
 UNIFORM = 1.0
-CLAUSE = "practice"
-KNOWN = "common practice; form of AS 4100:2020 9.1.9, from memory, fairly sure"
+CLAUSE = "9.1.9"
+KNOWN = "from memory, fairly sure"
 
 
-@formula("L_v", NZS, title="length of a shear plane", clause=CLAUSE, known=KNOWN)
+@formula("L_v", COMMON, title="length of a shear plane", clause=CLAUSE, known=KNOWN)
 def shear_length(e_1: Any, n_p: Any, s_p: Any) -> Any:
     """End of the ply to the last bolt of a line [length]."""
     return e_1 + (n_p - 1) * s_p
 
 
-@formula("A_gv", NZS, title="gross shear area", clause=CLAUSE, known=KNOWN)
+@formula("A_gv", COMMON, title="gross shear area", clause=CLAUSE, known=KNOWN)
 def gross_shear(n_e: Any, n_v: Any, L_v: Any, t: Any) -> Any:
     """Gross area of the shear planes of all plies [area]."""
     return n_e * n_v * L_v * t
 
 
-@formula("A_nv", NZS, title="net shear area", clause=CLAUSE, known=KNOWN)
+@formula("A_nv", COMMON, title="net shear area", clause=CLAUSE, known=KNOWN)
 def net_shear(n_e: Any, n_v: Any, L_v: Any, n_p: Any, d_h: Any, t: Any) -> Any:
     """Net area of the shear planes of all plies, the last hole counted half [area]."""
     return n_e * n_v * (L_v - (n_p - 0.5) * d_h) * t
 
 
-@formula("A_nt", NZS, title="net tension area", clause=CLAUSE, known=KNOWN)
+@formula("A_nt", COMMON, title="net tension area", clause=CLAUSE, known=KNOWN)
 def net_tension(n_e: Any, b_t: Any, t: Any) -> Any:
     """Net area of the tension plane of all plies [area]."""
     return n_e * b_t * t
 
 
-@formula("b_t", NZS, title="net width in tension, bolt line to edge", clause=CLAUSE, known=KNOWN)
+@formula("b_t", COMMON, title="net width in tension, bolt line to edge", clause=CLAUSE, known=KNOWN)
 def width_to_edge(e_2: Any, d_h: Any) -> Any:
     """One line of bolts to the edge beside it [length]."""
     return e_2 - d_h / 2
 
 
 @formula(
-    "b_t", NZS, title="net width in tension, both lines to the edge", clause=CLAUSE, known=KNOWN
+    "b_t", COMMON, title="net width in tension, both lines to the edge", clause=CLAUSE, known=KNOWN
 )
 def width_two_to_edge(s_g: Any, e_2: Any, d_h: Any) -> Any:
     """The farther of two lines to the edge, across the nearer [length]."""
     return s_g + e_2 - 1.5 * d_h
 
 
-@formula("b_t", NZS, title="net width in tension, between the lines", clause=CLAUSE, known=KNOWN)
+@formula("b_t", COMMON, title="net width in tension, between the lines", clause=CLAUSE, known=KNOWN)
 def width_between(s_g: Any, d_h: Any) -> Any:
     """Between two lines of bolts [length]."""
     return s_g - d_h
 
 
 @formula(
-    "b_t", NZS, title="net width in tension, each line to its edge", clause=CLAUSE, known=KNOWN
+    "b_t", COMMON, title="net width in tension, each line to its edge", clause=CLAUSE, known=KNOWN
 )
 def width_both_edges(e_2: Any, d_h: Any) -> Any:
     """Each of two lines to the edge on its side [length]."""
     return 2 * (e_2 - d_h / 2)
 
 
-@formula("N_bs", NZS, title="block shear", clause=CLAUSE, known=KNOWN)
+@formula("N_bs", COMMON, title="block shear", clause=CLAUSE, known=KNOWN)
 def block_shear(f_u: Any, A_nv: Any, f_y: Any, A_gv: Any, k_bs: Any, A_nt: Any) -> Any:
     """Nominal capacity of a tear-out block [force]."""
     return minimum(0.6 * f_u * A_nv, 0.6 * f_y * A_gv) + k_bs * f_u * A_nt
 
 
-@formula("phiN_bs", NZS, title="design capacity of the block", clause=CLAUSE, known=KNOWN)
+@formula("phiN_bs", COMMON, title="design capacity of the block", clause=CLAUSE, known=KNOWN)
 def design_block(phi: Any, N_bs: Any) -> Any:
     """Design capacity of a tear-out block [force]."""
     return phi * N_bs

@@ -1,4 +1,4 @@
-"""The walk through NZS 3404 for a tension member: section 7, then each end connection."""
+"""The walk of AS 4100 and NZS 3404 for a tension member: section 7, then each end connection."""
 
 from __future__ import annotations
 
@@ -8,28 +8,16 @@ from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.calculation.working import Working
-from tensionlib.standards.nzs3404 import bolts, detailing, factors, tension
-from tensionlib.standards.nzs3404.walk_bolted import bolted_end, joint_length
-from tensionlib.standards.nzs3404.walk_welded import shorter_run, welded_end
+from tensionlib.standards.common_as_nzs import bolts, detailing, tension
+from tensionlib.standards.common_as_nzs.rules import Rules
+from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end, joint_length
+from tensionlib.standards.common_as_nzs.walk_welded import shorter_run, welded_end
 
 _STANDARD_HOLE = "standard hole"
 HOLES = ThresholdTable(
     "clearance of a standard hole",
     "14.3.5.2, from memory",
     {_STANDARD_HOLE: tuple(Band(limit, True, value) for limit, value in bolts.CLEARANCES)},
-)
-
-NOT_CHECKED = (
-    "the members and supports the gussets are fixed to, and the gussets' own fixing to them",
-    "block shear of any block but those shown; to the gusset's side edge only where it is stated",
-    "shear of a tube's or an element's own wall beside its welds",
-    "compression, when the force reverses, in the member and the gussets",
-    "bending from self-weight, lateral load or eccentricity the correction factor does not cover",
-    "earthquake: member category, overstrength of the brace and the detailing that follows from it",
-    "bolt tension, prying, and slip at serviceability",
-    "fatigue, brittle fracture, fire, corrosion and durability",
-    "stretch, sag and vibration",
-    "erection, access for tools and tolerance of the fabricated work",
 )
 
 
@@ -42,6 +30,7 @@ class _Member:
     f_u: Entry
     phi: Entry
     inputs: Inputs
+    rules: Rules
 
 
 def hole_clearance(d_f: float) -> float:
@@ -50,11 +39,15 @@ def hole_clearance(d_f: float) -> float:
     return clearance
 
 
-def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry) -> None:
+def design(
+    rules: Rules, work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry
+) -> None:
     """Write the whole calculation: the member once, then each distinct end.
 
     Parameters
     ----------
+    rules : Rules
+        The standard's own answers.
     work : Working
     member : Inputs
         Numbers L, A_g, t_y and, where known, r_min and d; tables f_y and f_u.
@@ -68,13 +61,15 @@ def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry
         t_y = member.take(work, "t_y")
         f_y = member.read(work, "f_y", t_y)
         f_u = member.read(work, "f_u", t_y)
-        phi = work.fixed("phi", factors.MEMBER_IN_TENSION, factors.CLAUSE, note="member in tension")
+        phi = work.fixed(
+            "phi", rules.factors.member, rules.factors.clause, note="member in tension"
+        )
         N_ty = work.step(tension.gross_yielding, A_g, f_y)
         phiN_ty = work.step(tension.design_gross_yielding, phi, N_ty)
         work.check("gross section yield", force, phiN_ty, "7.1, 7.2")
         _slenderness(work, member)
 
-    lines = _Member(force, A_g, f_u, phi, member)
+    lines = _Member(force, A_g, f_u, phi, member, rules)
     capacities = [phiN_ty]
     for end in ends:
         with work.part(end.choice("label") + "Net section"):
@@ -97,10 +92,10 @@ def design(work: Working, member: Inputs, ends: tuple[Inputs, ...], force: Entry
 
     for end in ends:
         if end.choice("kind") == "bolted":
-            bolted_end(work, end, N_c, f_y, f_u)
+            bolted_end(rules, work, end, N_c, f_y, f_u)
         else:
-            welded_end(work, end, N_c)
-    work.leaves_out(*NOT_CHECKED)
+            welded_end(rules, work, end, N_c)
+    work.leaves_out(*rules.not_checked)
 
 
 def _slenderness(work: Working, member: Inputs) -> None:
@@ -119,17 +114,17 @@ def _slenderness(work: Working, member: Inputs) -> None:
 
 
 def _net_section(work: Working, member: _Member, end: Inputs) -> Entry | None:
-    """Net area, k_te and the check; gives the design capacity, or None where not covered."""
+    """Net area, k_t and the check; gives the design capacity, or None where not covered."""
     A_d = _deduction(work, end)
     if A_d is None:
         work.note("Welded end without holes: the net area is the gross area.", "9.1.10")
         A_n = member.A_g
     else:
         A_n = work.step(tension.net_area, member.A_g, A_d)
-    k_te = _factor(work, member.inputs, end)
-    if k_te is None:
+    k_t = _factor(work, member, end)
+    if k_t is None:
         return None
-    N_tu = work.step(tension.net_fracture, k_te, A_n, member.f_u)
+    N_tu = work.step(tension.net_fracture, k_t, A_n, member.f_u)
     phiN_tu = work.step(tension.design_net_fracture, member.phi, N_tu)
     work.check("net section rupture", member.force, phiN_tu, "7.1, 7.2")
     return phiN_tu
@@ -189,16 +184,17 @@ def connection_case(end: Inputs) -> str:
     }.get((shape, to), "")
 
 
-def _factor(work: Working, member: Inputs, end: Inputs) -> Entry | None:
-    """The line for k_te, or None where the standard does not cover the case."""
-    if end.has("k_te"):
-        return end.take(work, "k_te")
+def _factor(work: Working, member: _Member, end: Inputs) -> Entry | None:
+    """The line for k_t, or None where the standard does not cover the case."""
+    symbol = member.rules.k_t
+    if end.has("k_t"):
+        return end.take(work, "k_t", symbol)
     key = connection_case(end)
     why = (
         f"Table 7.3.2 has no row for this section ({end.choice('shape')}) connected by its"
-        f" {end.choice('to')}: state k_te with the reason for it, or connect another element"
+        f" {end.choice('to')}: state k_t with the reason for it, or connect another element"
     )
-    if key == "both flanges" and not _covers_depth(work, member, end):
+    if key == "both flanges" and not _covers_depth(work, member.inputs, end):
         key = ""
         why = "Table 7.3.2 asks for a joint at least as long as the section is deep"
     if not key:
@@ -206,7 +202,7 @@ def _factor(work: Working, member: Inputs, end: Inputs) -> Entry | None:
         return None
     case = tension.CASES[key]
     return work.fixed(
-        "k_te", case.k_te, case.clause, note=case.words, source=f"{case.clause}, {case.sure}"
+        symbol, case.k_t, case.clause, note=case.words, source=f"{case.clause}, {case.sure}"
     )
 
 

@@ -1,15 +1,22 @@
-"""The walk through NZS 3404 for a gusset on the width to which the force spreads."""
+"""The walk of AS 4100 and NZS 3404 for a gusset on the width to which the force spreads."""
 
 from __future__ import annotations
 
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
-from tensionlib.standards.nzs3404 import factors, gusset
+from tensionlib.standards.common_as_nzs import gusset
+from tensionlib.standards.common_as_nzs.rules import Factors
 
 
 def check_gusset(
-    work: Working, end: Inputs, N_c: Entry, b_d: Entry | None, f_yp: Entry, f_up: Entry
+    factors: Factors,
+    work: Working,
+    end: Inputs,
+    N_c: Entry,
+    b_d: Entry | None,
+    f_yp: Entry,
+    f_up: Entry,
 ) -> None:
     """Yielding and fracture of the gusset on the width that counts.
 
@@ -25,8 +32,8 @@ def check_gusset(
     b_e = _width(work, end, b_d)
     phi = work.fixed(
         "phi",
-        factors.CONNECTION_COMPONENT,
-        factors.CLAUSE,
+        factors.component,
+        factors.clause,
         note="connection component other than bolt, pin or weld",
     )
     n_g, t_p = end.take(work, "n_g"), end.take(work, "t_p")

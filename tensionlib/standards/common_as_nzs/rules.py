@@ -1,0 +1,66 @@
+"""Where AS 4100 and NZS 3404 part: what the common walk asks of the standard it walks."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass
+
+from tensionlib.calculation.sheet import Entry
+from tensionlib.calculation.working import Working
+
+# Bolt diameter, thickness and tensile strength of the ply; the symbol and title of the line.
+Bearing = Callable[[Working, Entry, Entry, Entry, str, str], Entry]
+
+
+@dataclass(frozen=True)
+class Factors:
+    """Capacity factors and the table that gives them."""
+
+    clause: str
+    member: float
+    component: float
+    bolt: float
+    pin: float
+    ply: float
+    slip: float
+    fillet: Mapping[str, float]
+
+
+@dataclass(frozen=True)
+class BlockRule:
+    """What the standard says of block shear: clause, capacity factor, how known, and a word."""
+
+    clause: str
+    phi: float
+    known: str
+    note: str
+
+
+@dataclass(frozen=True)
+class Rules:
+    """One standard's answers.
+
+    `k_t` is the symbol under which the standard writes the correction factor; `bearing` writes
+    the nominal bearing capacity of a ply at one bolt.
+    """
+
+    name: str
+    factors: Factors
+    k_t: str
+    bearing: Bearing
+    block: BlockRule
+    not_checked: tuple[str, ...]
+
+
+NOT_CHECKED = (
+    "the members and supports the gussets are fixed to, and the gussets' own fixing to them",
+    "block shear of any block but those shown; to the gusset's side edge only where it is stated",
+    "shear of a tube's or an element's own wall beside its welds",
+    "compression, when the force reverses, in the member and the gussets",
+    "bending from self-weight, lateral load or eccentricity the correction factor does not cover",
+    "earthquake: member category, overstrength of the brace and the detailing that follows from it",
+    "bolt tension, prying, and slip at serviceability",
+    "fatigue, brittle fracture, fire, corrosion and durability",
+    "stretch, sag and vibration",
+    "erection, access for tools and tolerance of the fabricated work",
+)
