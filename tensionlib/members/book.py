@@ -37,6 +37,7 @@ class Case:
         """All that can steer the walk before it has tested a condition."""
         return (
             self.standard.key,
+            self.standard.edition,
             self.member.signature,
             tuple(end.signature for end in self.ends),
         )
