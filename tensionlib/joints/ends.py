@@ -26,7 +26,8 @@ def in_mm(length: Any) -> float:
     return 0.0 if length is None else float(length.internal)
 
 
-def _choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
+def choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
+    """A field of an end that takes one of a few words. Raises InputError naming those."""
     if not isinstance(value, str) or value not in accepted:
         raise InputError(
             f"{argument}: got {value!r}; one of {', '.join(map(repr, accepted))} is due."
@@ -35,7 +36,7 @@ def _choice(argument: str, value: object, accepted: tuple[str, ...]) -> str:
     return value
 
 
-class _Stated:
+class Stated:
     """Passes the fields of a frozen dataclass through the door."""
 
     def _length(
@@ -79,7 +80,7 @@ class _Stated:
 
 
 @dataclass(frozen=True)
-class Gusset(_Stated):
+class Gusset(Stated):
     """A gusset plate.
 
     Parameters
@@ -107,7 +108,7 @@ class Gusset(_Stated):
 
 
 @dataclass(frozen=True)
-class Bolted(_Stated):
+class Bolted(Stated):
     """A bolted end: one or two lines of bolts through one element of the section.
 
     Parameters
@@ -170,9 +171,9 @@ class Bolted(_Stated):
     kind: ClassVar[str] = "bolted"
 
     def __post_init__(self) -> None:
-        _choice("to", self.to, BOLTED_TO)
-        _choice("threads", self.threads, THREADS)
-        _choice("edge_kind", self.edge_kind, EDGES)
+        choice("to", self.to, BOLTED_TO)
+        choice("threads", self.threads, THREADS)
+        choice("edge_kind", self.edge_kind, EDGES)
         if not isinstance(self.bolts, str):
             raise InputError(f"bolts: got {self.bolts!r}; name them, for example 'M20 8.8/S'")
         if not isinstance(self.plate, Gusset):
@@ -216,7 +217,7 @@ class Bolted(_Stated):
 
 
 @dataclass(frozen=True)
-class Welded(_Stated):
+class Welded(Stated):
     """A welded end: longitudinal fillets along both sides, and one across the end if wanted.
 
     Parameters
@@ -258,8 +259,8 @@ class Welded(_Stated):
     kind: ClassVar[str] = "welded"
 
     def __post_init__(self) -> None:
-        _choice("to", self.to, WELDED_TO)
-        _choice("quality", self.quality, QUALITIES)
+        choice("to", self.to, WELDED_TO)
+        choice("quality", self.quality, QUALITIES)
         if not isinstance(self.metal, str):
             raise InputError(f"metal: got {self.metal!r}; name it, for example 'E48XX'")
         if not isinstance(self.plate, Gusset):

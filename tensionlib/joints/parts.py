@@ -15,6 +15,9 @@ from typing import Protocol
 from tensionlib.errors import InputError
 
 
+_BACKED = 1e6  # mm; finite, so that it may meet a factor of zero
+
+
 @dataclass(frozen=True, slots=True)
 class Opening:
     """A hole: its centre, its size across and along the force, and whether a bolt of the joint
@@ -71,11 +74,14 @@ class Flat:
     """A leg, web, flange or plate, or several of them opened flat: strips side by side.
 
     `low_free` and `high_free` tell whether the outer edges are free edges a block can tear to.
+    `backs` are places across the force where another plate stands on this one, a web on a flange:
+    nothing tears across them, so they count as very thick.
     """
 
     strips: tuple[Strip, ...]
     low_free: bool = True
     high_free: bool = True
+    backs: tuple[float, ...] = ()
 
     def __post_init__(self) -> None:
         at = 0.0
@@ -106,6 +112,8 @@ class Flat:
 
     def thickness_between(self, y_1: float, y_2: float) -> float:
         low, high = min(y_1, y_2), max(y_1, y_2)
+        if any(low < back < high for back in self.backs):
+            return _BACKED
         return min(s.t for s in self.strips if s.low < high and s.high > low)
 
     def to_end(self, x: float, y: float) -> float:
