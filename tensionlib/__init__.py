@@ -27,6 +27,10 @@ if TYPE_CHECKING:
     from tensionlib.joints.ends import Bolted as Bolted
     from tensionlib.joints.ends import Gusset as Gusset
     from tensionlib.joints.ends import Welded as Welded
+    from tensionlib.joints.holes import Hole as Hole
+    from tensionlib.joints.holes import Pattern as Pattern
+    from tensionlib.joints.pattern_end import BoltedPattern as BoltedPattern
+    from tensionlib.joints.pattern_end import as_pattern as as_pattern
     from tensionlib.members.design import design as design
     from tensionlib.members.member import Member as Member
     from tensionlib.package.issue import issue as issue
@@ -45,18 +49,22 @@ if TYPE_CHECKING:
 
 _WHERE = {
     "Bolted": "joints.ends",
+    "BoltedPattern": "joints.pattern_end",
     "Calculation": "calculation.result",
     "Check": "calculation.result",
     "Constant": "calculation.formula",
     "Gusset": "joints.ends",
+    "Hole": "joints.holes",
     "METRIC": "quantities",
     "Member": "members.member",
     "Notation": "calculation.symbols",
+    "Pattern": "joints.holes",
     "Source": "calculation.symbols",
     "Symbol": "calculation.symbols",
     "US": "quantities",
     "Welded": "joints.ends",
     "Working": "calculation.working",
+    "as_pattern": "joints.pattern_end",
     "bolt": "steel",
     "by_dimensions": "steel",
     "check_file": "package.project",

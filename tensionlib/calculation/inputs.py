@@ -26,13 +26,15 @@ class Inputs:
     """Numbers by name and choices by name.
 
     A walk reads choices as text and takes numbers only as entries, so that no number can steer
-    it but through a condition that is printed.
+    it but through a condition that is printed. `parts` are inputs of what this is made of, such
+    as the steps of a chain of holes, each with a prefix of its own.
     """
 
     choices: Mapping[str, str]
     _numbers: Mapping[str, Number] = field(repr=False)
     tables: Mapping[str, tuple[ThresholdTable, str]] = field(default_factory=dict)
     prefix: str = ""
+    parts: Mapping[str, tuple[Inputs, ...]] = field(default_factory=dict)
     _kept: dict[str, Entry] = field(default_factory=dict, repr=False, compare=False)
 
     @property
@@ -43,11 +45,16 @@ class Inputs:
             tuple(self.choices.items()),
             frozenset(self._numbers),
             tuple((name, table.name, row) for name, (table, row) in self.tables.items()),
+            tuple((name, tuple(p.signature for p in parts)) for name, parts in self.parts.items()),
         )
 
     def numbers(self) -> dict[str, Number]:
         """The numbers by the key each has on a sheet: for filling, never for a walk."""
-        return {self.prefix + name: number for name, number in self._numbers.items()}
+        found = {self.prefix + name: number for name, number in self._numbers.items()}
+        for parts in self.parts.values():
+            for part in parts:
+                found |= part.numbers()
+        return found
 
     def choice(self, name: str) -> str:
         try:

@@ -52,6 +52,12 @@ class Stated:
         )
         object.__setattr__(self, name, quantity)
 
+    def _shear_planes(self) -> None:
+        """Packing and slip factor of a bolted end."""
+        self._length("packing", example="8 mm")
+        mu = factor("slip_factor", vars(self)["slip_factor"], above=0.0, at_most=1.0)
+        object.__setattr__(self, "slip_factor", mu)
+
     def _factor(self) -> None:
         """A stated k_te, which needs the reason that is printed with it."""
         stated, reason = vars(self)["k_te"], vars(self)["k_te_reason"]
@@ -143,6 +149,11 @@ class Bolted(Stated):
         Centre of the outer bolt to the side edge of the gusset, across the force.
     clearance : length, optional
         Hole diameter less bolt diameter; the standard's unless given.
+    packing : length, optional
+        Thickness of the packing plates in a shear plane, where there are any.
+    slip_factor : number
+        Slip factor of the faying surfaces, for tensioned friction bolts (TF): 0.35 for clean
+        as-rolled surfaces (from memory); others by test.
     edge_kind : str
         How the member's end and the gusset's edges are cut: "sheared" (or hand flame cut),
         "machine cut" (machine flame cut, sawn or planed) or "rolled".
@@ -166,6 +177,8 @@ class Bolted(Stated):
     plate_edge_distance: Length | None = None
     clearance: Length | None = None
     edge_kind: str = "sheared"
+    packing: Length | None = None
+    slip_factor: float = 0.35
     k_te: float | None = None
     k_te_reason: str = ""
     kind: ClassVar[str] = "bolted"
@@ -196,6 +209,7 @@ class Bolted(Stated):
         self._length("end_distance", example="35 mm", due=True)
         self._length("stagger", at_least=0.0, example="35 mm")
         self._length("clearance", at_least=0.0, example="2 mm")
+        self._shear_planes()
         if self.per_line > 1 and self.pitch is None:
             raise InputError(
                 "pitch: missing; two or more bolts a line need it, for example '70 mm'"
@@ -287,6 +301,3 @@ class Welded(Stated):
                 " accepted on a leg, web, flange or plate"
             )
         self._factor()
-
-
-End = Bolted | Welded

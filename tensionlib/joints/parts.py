@@ -12,8 +12,10 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Protocol
 
-from tensionlib.errors import InputError
+import numpy as np
+import numpy.typing as npt
 
+from tensionlib.errors import InputError
 
 _BACKED = 1e6  # mm; finite, so that it may meet a factor of zero
 
@@ -115,6 +117,18 @@ class Flat:
         if any(low < back < high for back in self.backs):
             return _BACKED
         return min(s.t for s in self.strips if s.low < high and s.high > low)
+
+    def steps(self, y: npt.NDArray[np.float64]) -> npt.NDArray[np.float64]:
+        """`thickness_between` for every two of several places y, shape (n,) to (n, n)."""
+        low = np.minimum(y[:, None], y[None, :])
+        high = np.maximum(y[:, None], y[None, :])
+        out = np.full(low.shape, np.inf)
+        for strip in self.strips:
+            met = (strip.low < high) & (strip.high > low)
+            out[met] = np.minimum(out[met], strip.t)
+        for back in self.backs:
+            out[(low < back) & (back < high)] = _BACKED
+        return out
 
     def to_end(self, x: float, y: float) -> float:
         return x

@@ -33,7 +33,7 @@ class BoltedPattern(Stated):
     ----------
     to : str
         The element on the gusset: as `Bolted`.
-    bolts, threads, edge_kind, k_te, k_te_reason
+    bolts, threads, edge_kind, packing, slip_factor, k_te, k_te_reason
         As `Bolted`.
     holes : Pattern
         Every hole of the end. A bolt through another element than `to` is taken to a plate like
@@ -62,6 +62,8 @@ class BoltedPattern(Stated):
     plate_end_distance: Length | None = None
     plate_edge_distance: Length | None = None
     edge_kind: str = "sheared"
+    packing: Length | None = None
+    slip_factor: float = 0.35
     share: str = "equal"
     credit_behind: bool = False
     block_tension: str = "uniform"
@@ -91,6 +93,7 @@ class BoltedPattern(Stated):
             raise InputError(f"credit_behind: got {self.credit_behind!r}; True or False is due")
         self._length("plate_end_distance", example="40 mm")
         self._length("plate_edge_distance", example="50 mm")
+        self._shear_planes()
         if not any(hole.bolt and self.at_gusset(hole.element) for hole in self.holes.holes):
             raise InputError(f"holes: no bolt goes through the {self.to}, which is on the gusset")
         self._factor()
@@ -145,6 +148,8 @@ def as_pattern(end: Bolted, section: Section) -> BoltedPattern:
         plate_end_distance=end.plate_end_distance,
         plate_edge_distance=end.plate_edge_distance,
         edge_kind=end.edge_kind,
+        packing=end.packing,
+        slip_factor=end.slip_factor,
         k_te=end.k_te,
         k_te_reason=end.k_te_reason,
     )

@@ -8,7 +8,7 @@ from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted
+from tensionlib.joints.ends import Bolted, Welded, in_mm
 from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
@@ -16,7 +16,6 @@ from tensionlib.members.resolve import end_inputs, member_inputs
 from tensionlib.members.sketching import sketches
 from tensionlib.quantities import (
     FORCE,
-    LENGTH,
     METRIC,
     SUMMARY_FIGURES,
     Quantity,
@@ -35,6 +34,7 @@ def design(
     force: Quantity | str | Entry,
     *,
     standard: str = "NZS 3404",
+    service: Quantity | str | None = None,
     view: View = METRIC,
     origin: str = "given",
 ) -> Calculation:
@@ -47,7 +47,9 @@ def design(
         The design tension force N* for the strength limit state. An entry of a working of your
         own brings that working's lines with it as the first parts of the calculation.
     standard : str
-        "NZS 3404".
+        "NZS 3404", "AS 4100" (the edition of 2020) or "AS 4100:1998".
+    service : quantity or text with a unit, optional
+        The force in service, which slip of tensioned friction bolts is checked for.
     view : View
         The units it is shown in: METRIC or US.
     origin : str
@@ -70,12 +72,18 @@ def design(
     if not isinstance(origin, str):
         raise InputError(f"origin: got {origin!r}; say in words where the force comes from")
     chosen = find_standard(standard)
+    served = None
+    if service is not None:
+        number = door("service", service, FORCE, at_least=0.0, example="150 kN").internal
+        served = Number(number, "given")
     holes = _fitting_holes(member, chosen)
     two = len(member.ends) == 2
     ends = tuple(
         end_inputs(
             member,
             end,
+            chosen,
+            service=served,
             label=f"End {i}: " if two else "",
             prefix=f"end {i}: " if two else "end: ",
         )
@@ -146,13 +154,12 @@ def _fitting_holes(member: Member, chosen: Standard) -> tuple[float, ...]:
     holes = []
     for end in member.ends:
         hole = 0.0
-        if isinstance(end, Bolted):
+        if not isinstance(end, Welded):
             d_f = bolt(end.bolts).d_f
-            hole = d_f + (
-                chosen.hole_clearance(d_f)
-                if end.clearance is None
-                else door("clearance", end.clearance, LENGTH).internal
-            )
+            hole, _ = chosen.hole_size(d_f, "standard")
+        if isinstance(end, Bolted):
+            if end.clearance is not None:
+                hole = d_f + in_mm(end.clearance)
             check_fit(member.profile, end, seat(member.profile, end), hole)
         holes.append(hole)
     return tuple(holes)
@@ -165,7 +172,7 @@ def _materials(member: Member) -> list[tuple[Source, str]]:
     for end in member.ends:
         plate = grade(end.plate.steel)
         found.append((Source(plate.standard, plate.standard, plate.known), f"gusset: {plate.name}"))
-        if isinstance(end, Bolted):
+        if not isinstance(end, Welded):
             fastener = bolt(end.bolts)
             found.append(
                 (Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}")

@@ -5,7 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, End, in_mm
+from tensionlib.joints.ends import Bolted, in_mm
+from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.members.member import End
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section
 
@@ -59,7 +61,7 @@ def seat(section: Section, end: End) -> Seat:
     InputError
         When the section has no such element, naming those it has.
     """
-    kind = "bolted" if isinstance(end, Bolted) else "welded"
+    kind = "bolted" if isinstance(end, Bolted | BoltedPattern) else "welded"
     accepted = (_BOLTED if kind == "bolted" else _WELDED).get(section.shape, ())
     if not accepted:
         raise InputError(
@@ -183,3 +185,16 @@ def _other(section: Section, place: Seat) -> str:
     if section.shape == "channel":
         return "web"
     return {"long leg": "short leg", "short leg": "long leg"}.get(place.element, place.element)
+
+
+def thickest(section: Section) -> float:
+    """Thickness that sets the yield stress: the thickest element, the conservative reading."""
+    sizes = [section.dims[n] for n in ("t", "t_f", "t_w") if n in section.dims]
+    if not sizes and "d" in section.dims:
+        sizes = [section.dims["d"]]
+    if not sizes:
+        raise InputError(
+            f"section: {section.designation} states no thickness; give t so that the grade's yield"
+            " stress can be read"
+        )
+    return max(sizes)

@@ -6,9 +6,12 @@ from dataclasses import dataclass, fields
 from typing import Any
 
 from tensionlib.errors import InputError, did_you_mean
-from tensionlib.joints.ends import Bolted, End, Welded
+from tensionlib.joints.ends import Bolted, Welded
+from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.quantities import LENGTH, Quantity, door
 from tensionlib.steel import Grade, Section, grade, section
+
+End = Bolted | BoltedPattern | Welded
 
 
 @dataclass(frozen=True)
@@ -24,9 +27,9 @@ class Member:
     steel : str or Grade
         Grade of the section: "AS/NZS 3679.1 300".
     length : length
-    end : Bolted or Welded
+    end : Bolted, BoltedPattern or Welded
         The end connection, at both ends unless `far_end` differs.
-    far_end : Bolted or Welded, optional
+    far_end : the same, optional
     title : str
         What the member is: "roof brace, grid B".
 
@@ -67,8 +70,8 @@ class Member:
             )
         for name in ("end", "far_end"):
             end = getattr(self, name)
-            if not isinstance(end, Bolted | Welded) and not (end is None and name == "far_end"):
-                raise InputError(f"{name}: got {end!r}; a Bolted(...) or Welded(...) end is due")
+            if not isinstance(end, End) and not (end is None and name == "far_end"):
+                raise InputError(f"{name}: got {end!r}; an end is due, as Bolted(...)")
 
     @property
     def ends(self) -> tuple[End, ...]:

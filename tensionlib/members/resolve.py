@@ -6,11 +6,13 @@ from functools import cache
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
-from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, End, Gusset, Welded, in_mm
-from tensionlib.members.geometry import Seat, seat
-from tensionlib.members.member import Member
-from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
+from tensionlib.joints.ends import Bolted, Gusset, Welded, in_mm
+from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.members.geometry import Seat, seat, thickest
+from tensionlib.members.member import End, Member
+from tensionlib.members.pattern import PatternGeometry, pattern_numbers
+from tensionlib.standards import Standard
+from tensionlib.steel import Grade, bolt, grade, weld_metal
 
 _STATED = "given"
 _COUNTED = "from the connection"
@@ -24,7 +26,7 @@ def member_inputs(member: Member) -> Inputs:
     numbers = {
         "A_g": Number(section.A, source),
         "L": Number(in_mm(member.length), _STATED),
-        "t_y": Number(_thickest(section), source),
+        "t_y": Number(thickest(section), source),
     }
     if section.r_min is not None:
         numbers["r_min"] = Number(section.r_min, source)
@@ -35,11 +37,23 @@ def member_inputs(member: Member) -> Inputs:
     )
 
 
-def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
+def end_inputs(
+    member: Member,
+    end: End,
+    standard: Standard,
+    *,
+    label: str,
+    prefix: str,
+    service: Number | None,
+) -> Inputs:
     """Numbers, choices and tables of one end.
 
     Parameters
     ----------
+    standard : Standard
+        Gives the sizes of holes and what block shear makes of the strengths.
+    service : Number, optional
+        Force in service, which slip of tensioned friction bolts is checked for.
     label : str
         What the titles of the end's parts begin with: "" or "End 1: ".
     prefix : str
@@ -63,24 +77,20 @@ def end_inputs(member: Member, end: End, *, label: str, prefix: str) -> Inputs:
     plate_steel = grade(end.plate.steel, "plate.steel")
     plate_steel.suits("plate", "plate.steel")
     tables = _tables(plate_steel, "f_yp", "f_up", "the gusset")
-    if isinstance(end, Bolted):
-        more, also = _bolted(end, place)
-    else:
+    parts: dict[str, tuple[Inputs, ...]] = {}
+    if isinstance(end, Welded):
         more, also = _welded(end)
-    return Inputs(choices | also, common | more, tables, prefix)
-
-
-def _thickest(section: Section) -> float:
-    """Thickness that sets the yield stress: the thickest element, the conservative reading."""
-    sizes = [section.dims[n] for n in ("t", "t_f", "t_w") if n in section.dims]
-    if not sizes and "d" in section.dims:
-        sizes = [section.dims["d"]]
-    if not sizes:
-        raise InputError(
-            f"section: {section.designation} states no thickness; give t so that the grade's yield"
-            " stress can be read"
-        )
-    return max(sizes)
+    else:
+        served = {} if service is None else {"N_star_ser": service}
+        parts["service"] = (Inputs({}, served, {}, prefix + "service "),) if served else ()
+        if isinstance(end, Bolted):
+            more, also = _bolted(end, place)
+        else:
+            more, also = _fasteners(end, place)
+            shape = PatternGeometry(member, end, standard)
+            numbers, found, within = pattern_numbers(shape, standard, prefix)
+            more, also, parts = more | numbers, also | found, parts | within
+    return Inputs(choices | also, common | more, tables, prefix, parts)
 
 
 def _plate(plate: Gusset) -> dict[str, Number]:
@@ -105,7 +115,10 @@ def _tables(steel: Grade, f_y: str, f_u: str, of: str) -> dict[str, tuple[Thresh
     }
 
 
-def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]]:
+def _fasteners(
+    end: Bolted | BoltedPattern, place: Seat
+) -> tuple[dict[str, Number], dict[str, str]]:
+    """What every bolted end has of its bolts."""
     fastener = bolt(end.bolts)
     source = fastener.source
     planes = Number(float(place.planes), _COUNTED)
@@ -116,6 +129,24 @@ def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]
         "A_o": Number(fastener.A_o, source),
         "n_n": planes,
         "n_x": planes,
+        "n_ei": planes,
+        "mu": Number(end.slip_factor, "given"),
+    }
+    if fastener.N_ti is not None:
+        numbers["N_ti"] = Number(fastener.N_ti, source)
+    if end.packing is not None:
+        numbers["t_k"] = Number(in_mm(end.packing), _STATED)
+    choices = {
+        "threads": end.threads,
+        "category": fastener.category,
+        "edge_kind": end.edge_kind,
+    }
+    return numbers, choices
+
+
+def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]]:
+    numbers, choices = _fasteners(end, place)
+    numbers |= {
         "n_l": Number(float(end.lines), _STATED),
         "n_p": Number(float(end.per_line), _STATED),
         "e_1": Number(in_mm(end.end_distance), _STATED),
@@ -134,11 +165,9 @@ def _bolted(end: Bolted, place: Seat) -> tuple[dict[str, Number], dict[str, str]
     staggered = end.stagger is not None and in_mm(end.stagger) > 0.0
     if staggered:
         numbers["s_2"] = Number(in_mm(end.stagger), _STATED)
-    choices = {
+    choices |= {
         "pattern": "staggered" if staggered else "straight",
-        "threads": end.threads,
-        "category": fastener.category,
-        "edge_kind": end.edge_kind,
+        "hole_kind": "standard",
         "side_edge": "rolled" if place.free_edge else "none",
         "lines_from": place.lines_from,
     }

@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 from tensionlib.calculation.result import Sketch
-from tensionlib.joints.ends import Bolted, End, Welded, in_mm
+from tensionlib.joints.ends import Bolted, Welded, in_mm
+from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.sketch import EndView, describe, sketch_end
 from tensionlib.joints.svg import to_svg
 from tensionlib.members.geometry import Seat, seat
-from tensionlib.members.member import Member
+from tensionlib.members.member import End, Member
 from tensionlib.steel import Section, bolt
 
 _SPREAD = 2 * 0.5773502691896257  # both sides of the force at 30°: twice the tangent
@@ -33,6 +34,8 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
     place = seat(section, end)
     if isinstance(end, Bolted):
         return _bolted(section, end, place, force, hole)
+    if isinstance(end, BoltedPattern):
+        return _pattern(section, end, place, force, hole)
     return _welded(section, end, place, force)
 
 
@@ -88,6 +91,40 @@ def _bolted(section: Section, end: Bolted, place: Seat, force: str, hole: float)
         net=(bottom, *net, top),
         along=((0.0, *xs, edge),),
         across=tuple(dict.fromkeys((0.0, *lines, place.width))),
+    )
+
+
+def _pattern(section: Section, end: BoltedPattern, place: Seat, force: str, hole: float) -> EndView:
+    """The holes of the element on the gusset; other elements have part views of their own."""
+    fastener = bolt(end.bolts)
+    shown = [h for h in end.holes.holes if end.at_gusset(h.element)]
+    holes = tuple((in_mm(h.x), in_mm(h.y)) for h in shown)
+    xs = sorted({round(x, 6) for x, _ in holes})
+    ys = sorted({round(y, 6) for _, y in holes})
+    stated = end.plate_end_distance
+    edge = xs[-1] + (xs[0] if stated is None else in_mm(stated))
+    count = f"{sum(h.bolt for h in end.holes.holes)} {end.bolts}"
+    return EndView(
+        section=section,
+        to=end.to,
+        element=place.element,
+        width=place.width,
+        thickness=place.thickness,
+        plate_thickness=in_mm(end.plate.thickness),
+        plate_end=edge,
+        plate_width=_plate_width(end, ys[-1] - ys[0], xs[-1] - xs[0], place.width),
+        force=force,
+        notes=(
+            section.designation.partition(",")[0],
+            f"gusset {in_mm(end.plate.thickness):g} mm",
+            count,
+            f"holes {hole:g} mm",
+        ),
+        holes=holes,
+        hole=hole,
+        bolt=fastener.d_f,
+        along=((0.0, *xs, edge),),
+        across=tuple(dict.fromkeys((0.0, *ys, place.width))),
     )
 
 

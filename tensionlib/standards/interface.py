@@ -9,6 +9,7 @@ from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
+from tensionlib.joints.blocks import Form
 
 Walk = Callable[[Working, Inputs, tuple[Inputs, ...], Entry], None]
 
@@ -17,7 +18,9 @@ Walk = Callable[[Working, Inputs, tuple[Inputs, ...], Entry], None]
 class Standard:
     """A standard: its key (the folder's name), its notation, and its walk for a tension member.
 
-    `hole_clearance` gives the clearance of a standard hole for a bolt diameter, both in mm.
+    `hole_size` gives width and length in mm of a hole for a bolt diameter and a kind of hole.
+    `block_forms` gives what block shear makes of f_y and f_u in MPa, the tension on the block
+    uniform or not: the search looks for the block with the least capacity by these forms.
     The notation holds at least the symbol N_star, the design tension force. `edition` is what a
     user writes behind the name to ask for this one ("1997"); `others` are the other editions on
     offer.
@@ -26,7 +29,8 @@ class Standard:
     key: str
     notation: Notation
     design: Walk
-    hole_clearance: Callable[[float], float]
+    hole_size: Callable[[float, str], tuple[float, float]]
+    block_forms: Callable[[float, float, bool], tuple[Form, ...]]
     edition: str = ""
     others: tuple[Standard, ...] = ()
 

@@ -30,6 +30,7 @@ RULES_2020 = Rules(
     name="AS 4100",
     factors=FACTORS,
     k_t="k_t",
+    slip_clause="3.5.5",
     bearing=bearing,
     block=BLOCK,
     not_checked=NOT_CHECKED,

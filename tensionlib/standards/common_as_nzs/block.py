@@ -12,11 +12,21 @@ from typing import Any
 
 from tensionlib.calculation.dispatch import minimum
 from tensionlib.calculation.formula import formula
+from tensionlib.joints.blocks import Form
 from tensionlib.standards.common_as_nzs.symbols import COMMON
 
-UNIFORM = 1.0
+UNIFORM, NON_UNIFORM = 1.0, 0.5
 CLAUSE = "9.1.9"
 KNOWN = "from memory, fairly sure"
+
+
+def block_forms(f_y: float, f_u: float, uniform: bool) -> tuple[Form, ...]:
+    """The two forms of 9.1.9 as coefficients of the areas, MPa: the lesser holds."""
+    k_bs = UNIFORM if uniform else NON_UNIFORM
+    return (
+        Form(gv=0.0, nv=0.6 * f_u, gt=0.0, nt=k_bs * f_u),
+        Form(gv=0.6 * f_y, nv=0.0, gt=0.0, nt=k_bs * f_u),
+    )
 
 
 @formula("L_v", COMMON, title="length of a shear plane", clause=CLAUSE, known=KNOWN)

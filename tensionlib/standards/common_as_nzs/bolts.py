@@ -18,9 +18,8 @@ MINIMUM_ACTION_CLAUSE = "9.1.4"
 L_300 = Constant("300 mm")
 L_1300 = Constant("1300 mm")
 L_4000 = Constant("4000 mm")
-
-# 14.3.5.2, from memory, sure: clearance of a standard hole in mm, up to and including the diameter.
-CLEARANCES = ((24.0, 2.0), (float("inf"), 3.0))
+T_6 = Constant("6 mm")
+T_20 = Constant("20 mm")
 
 
 @formula("N_min", COMMON, title="minimum design action on the connection", clause="9.1.4")
@@ -55,6 +54,16 @@ def short_joint(L_j: Any) -> Any:
 @condition(COMMON, title="is the joint of middle length", clause="Table 9.3.2.1")
 def middle_joint(L_j: Any) -> Any:
     return L_j <= L_1300
+
+
+@condition(COMMON, title="is the packing thin", clause="9.3.2.5")
+def thin_packing(t_k: Any) -> Any:
+    return t_k <= T_6
+
+
+@condition(COMMON, title="is the packing thinner than the rule ends", clause="9.3.2.5")
+def middle_packing(t_k: Any) -> Any:
+    return t_k < T_20
 
 
 @formula("k_r", COMMON, title="reduction for the long joint", clause="Table 9.3.2.1")

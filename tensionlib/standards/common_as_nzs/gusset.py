@@ -26,6 +26,15 @@ def spread_bolts(n_l: Any, s_g: Any, L_j: Any) -> Any:
 
 
 @formula(
+    "b_d", COMMON, title="width at the last bolts, 30° each side", clause="practice", known=PRACTICE
+)
+def spread_staggered(n_l: Any, s_g: Any, L_j: Any, s_2: Any) -> Any:
+    """Width over two staggered lines: the line that stands back spreads from its own first bolt,
+    the other one from a stagger nearer the last [length]."""
+    return (n_l - 1) * s_g + (2 * L_j - s_2) * tan(SPREAD)
+
+
+@formula(
     "b_d", COMMON, title="width at the last bolt, 30° each side", clause="practice", known=PRACTICE
 )
 def spread_line(L_j: Any) -> Any:

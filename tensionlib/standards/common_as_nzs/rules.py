@@ -40,13 +40,15 @@ class BlockRule:
 class Rules:
     """One standard's answers.
 
-    `k_t` is the symbol under which the standard writes the correction factor; `bearing` writes
-    the nominal bearing capacity of a ply at one bolt.
+    `k_t` is the symbol under which the standard writes the correction factor; `slip_clause` is
+    where it gives the capacity factor for slip; `bearing` writes the nominal bearing capacity of
+    a ply at one bolt.
     """
 
     name: str
     factors: Factors
     k_t: str
+    slip_clause: str
     bearing: Bearing
     block: BlockRule
     not_checked: tuple[str, ...]

@@ -125,5 +125,8 @@ CASES: dict[str, ConnectionCase] = {
     "back to back": ConnectionCase(
         1.0, "two equal components on opposite sides of the gusset, tied together as 7.4 asks"
     ),
+    "all elements": ConnectionCase(
+        1.0, "bolts through every element of the section", clause="7.3.1"
+    ),
     "concentric": ConnectionCase(1.0, "force spread evenly over the whole section", clause="7.3.1"),
 }

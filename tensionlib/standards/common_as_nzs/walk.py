@@ -6,19 +6,17 @@ from dataclasses import dataclass
 
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
-from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.calculation.working import Working
-from tensionlib.standards.common_as_nzs import bolts, detailing, tension
+from tensionlib.standards.common_as_nzs import bolts, detailing, hole_sizes, tension
+from tensionlib.standards.common_as_nzs.bolts_in_shear import joint_length
 from tensionlib.standards.common_as_nzs.rules import Rules
-from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end, joint_length
-from tensionlib.standards.common_as_nzs.walk_welded import shorter_run, welded_end
-
-_STANDARD_HOLE = "standard hole"
-HOLES = ThresholdTable(
-    "clearance of a standard hole",
-    "14.3.5.2, from memory",
-    {_STANDARD_HOLE: tuple(Band(limit, True, value) for limit, value in bolts.CLEARANCES)},
+from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end
+from tensionlib.standards.common_as_nzs.walk_pattern import (
+    force_at_chain,
+    pattern_deduction,
+    pattern_end,
 )
+from tensionlib.standards.common_as_nzs.walk_welded import shorter_run, welded_end
 
 
 @dataclass(frozen=True)
@@ -31,12 +29,6 @@ class _Member:
     phi: Entry
     inputs: Inputs
     rules: Rules
-
-
-def hole_clearance(d_f: float) -> float:
-    """Clearance of a standard hole for a bolt of diameter `d_f`, both in mm. 14.3.5.2."""
-    clearance: float = HOLES.read(_STANDARD_HOLE, d_f)
-    return clearance
 
 
 def design(
@@ -93,6 +85,8 @@ def design(
     for end in ends:
         if end.choice("kind") == "bolted":
             bolted_end(rules, work, end, N_c, f_y, f_u)
+        elif end.choice("kind") == "bolted pattern":
+            pattern_end(rules, work, end, N_c, f_y, f_u)
         else:
             welded_end(rules, work, end, N_c)
     work.leaves_out(*rules.not_checked)
@@ -126,7 +120,8 @@ def _net_section(work: Working, member: _Member, end: Inputs) -> Entry | None:
         return None
     N_tu = work.step(tension.net_fracture, k_t, A_n, member.f_u)
     phiN_tu = work.step(tension.design_net_fracture, member.phi, N_tu)
-    work.check("net section rupture", member.force, phiN_tu, "7.1, 7.2")
+    force = force_at_chain(work, end, member.force)
+    work.check("net section rupture", force, phiN_tu, "7.1, 7.2")
     return phiN_tu
 
 
@@ -139,11 +134,13 @@ def _deduction(work: Working, end: Inputs) -> Entry | None:
         )
     if end.choice("kind") == "welded":
         return None
+    if end.choice("kind") == "bolted pattern":
+        return pattern_deduction(work, end)
     d_f = end.take(work, "d_f")
     c_h = (
         end.take(work, "c_h")
         if end.has("c_h")
-        else work.upto(HOLES, _STANDARD_HOLE, "c_h", d_f, clause="14.3.5.2")
+        else work.upto(hole_sizes.CLEARANCES, hole_sizes.STANDARD, "c_h", d_f, clause="14.3.5.2")
     )
     d_h = work.step(tension.hole_diameter, d_f, c_h)
     end.keep("d_h", d_h)
@@ -170,6 +167,8 @@ def _zigzag_step(work: Working, end: Inputs) -> Entry:
 def connection_case(end: Inputs) -> str:
     """The row of `tension.CASES` for this end, or "" where the standard's table has none."""
     shape, to = end.choice("shape"), end.choice("to")
+    if end.choice("kind") == "bolted pattern" and end.choice("all_elements") == "yes":
+        return "all elements"
     if shape in ("double angle", "double channel"):
         return "back to back"
     if shape == "angle":
@@ -208,7 +207,7 @@ def _factor(work: Working, member: _Member, end: Inputs) -> Entry | None:
 
 def _covers_depth(work: Working, member: Inputs, end: Inputs) -> bool:
     d = member.take(work, "d")
-    if end.choice("kind") == "bolted":
+    if end.choice("kind") in ("bolted", "bolted pattern"):
         length = joint_length(work, end)
         return length is not None and work.holds(tension.joint_covers_depth, length, d)
     return work.holds(tension.weld_covers_depth, shorter_run(work, end), d)

@@ -7,6 +7,12 @@ from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
 from tensionlib.standards.common_as_nzs import bolts, detailing, gusset
+from tensionlib.standards.common_as_nzs.bolts_in_shear import (
+    bolt_capacity,
+    bolt_count,
+    joint_length,
+    slip_check,
+)
 from tensionlib.standards.common_as_nzs.rules import Rules
 from tensionlib.standards.common_as_nzs.walk_block import (
     Ply,
@@ -24,13 +30,6 @@ def bolted_end(
     label = end.choice("label")
     with work.part(label + "Bolts"):
         _bolts_in_shear(rules, work, end, N_c)
-        if end.choice("category") == "TF":
-            work.not_covered(
-                "slip",
-                "slip of tensioned friction bolts at serviceability is not yet offered; the bolts"
-                " are checked in shear and bearing as any others",
-                "9.3.3",
-            )
     with work.part(label + "Member at the bolts"):
         _member_plies(rules, work, end, N_c, f_u)
         if blocks := member_blocks(end):
@@ -51,51 +50,11 @@ def bolted_end(
         _distances(work, end)
 
 
-def joint_length(work: Working, end: Inputs) -> Entry | None:
-    """The line for L_j, written once; None for one bolt a line without stagger."""
-    known = end.kept("L_j")
-    if known is not None:
-        return known
-    staggered = end.choice("pattern") == "staggered"
-    if not end.has("s_p"):
-        return end.take(work, "s_2") if staggered else None
-    n_p, s_p = end.take(work, "n_p"), end.take(work, "s_p")
-    if staggered:
-        return end.keep(
-            "L_j", work.step(bolts.joint_length_staggered, n_p, s_p, end.take(work, "s_2"))
-        )
-    return end.keep("L_j", work.step(bolts.joint_length, n_p, s_p))
-
-
 def _bolts_in_shear(rules: Rules, work: Working, end: Inputs, N_c: Entry) -> None:
-    phi = work.fixed("phi", rules.factors.bolt, rules.factors.clause, note="bolt in shear")
-    k_r = _joint_factor(work, end)
-    f_uf = end.take(work, "f_uf")
-    if end.choice("threads") == "in shear plane":
-        V_f = work.step(
-            bolts.shear_threads_in, f_uf, k_r, end.take(work, "n_n"), end.take(work, "A_c")
-        )
-    else:
-        V_f = work.step(
-            bolts.shear_threads_out, f_uf, k_r, end.take(work, "n_x"), end.take(work, "A_o")
-        )
-    n_b = work.step(
-        bolts.bolt_count, end.take(work, "n_g"), end.take(work, "n_l"), end.take(work, "n_p")
-    )
-    capacity = work.step(bolts.design_shear, phi, n_b, V_f)
+    phi, V_f = bolt_capacity(rules, work, end)
+    capacity = work.step(bolts.design_shear, phi, bolt_count(work, end), V_f)
     work.check("bolt shear", N_c, capacity, "9.3.2.1")
-
-
-def _joint_factor(work: Working, end: Inputs) -> Entry:
-    L_j = joint_length(work, end)
-    clause = "Table 9.3.2.1"
-    if L_j is None:
-        return work.fixed("k_r", 1.0, clause, note="one bolt along the force")
-    if work.holds(bolts.short_joint, L_j, yes="no reduction"):
-        return work.fixed("k_r", 1.0, clause, note="short joint")
-    if work.holds(bolts.middle_joint, L_j, yes="reduction by length"):
-        return work.step(bolts.long_joint_factor, L_j)
-    return work.fixed("k_r", 0.75, clause, note="longest joints")
+    slip_check(rules, work, end)
 
 
 def _least_clear(work: Working, end: Inputs, distance: str, symbols: tuple[str, str, str]) -> Entry:
@@ -142,10 +101,12 @@ def _spread(work: Working, end: Inputs) -> Entry | None:
     """The width to which the force spreads; None for a single bolt, which has none."""
     L_j = joint_length(work, end)
     if end.has("s_g"):
-        s_g = end.take(work, "s_g")
+        n_l, s_g = end.take(work, "n_l"), end.take(work, "s_g")
         if L_j is None:
-            return work.step(gusset.spread_row, end.take(work, "n_l"), s_g)
-        return work.step(gusset.spread_bolts, end.take(work, "n_l"), s_g, L_j)
+            return work.step(gusset.spread_row, n_l, s_g)
+        if end.choice("pattern") == "staggered":
+            return work.step(gusset.spread_staggered, n_l, s_g, L_j, end.take(work, "s_2"))
+        return work.step(gusset.spread_bolts, n_l, s_g, L_j)
     return None if L_j is None else work.step(gusset.spread_line, L_j)
 
 

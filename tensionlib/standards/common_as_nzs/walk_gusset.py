@@ -22,14 +22,9 @@ def check_gusset(
 
     `b_d` is the width by spread, None where the pattern has none (a single bolt).
     """
-    if b_d is None and not end.has("b_p"):
-        work.not_covered(
-            "yield and rupture",
-            "the force of a single bolt has no width by spread: state the gusset's width",
-            "practice",
-        )
+    b_e = check_width(work, end, end, b_d)
+    if b_e is None:
         return
-    b_e = _width(work, end, b_d)
     phi = work.fixed(
         "phi",
         factors.component,
@@ -54,13 +49,25 @@ def check_gusset(
     work.check("rupture", N_c, phiN_pu, "7.2", note="on the width to which the force spreads")
 
 
-def _width(work: Working, end: Inputs, b_d: Entry | None) -> Entry:
+def check_width(work: Working, end: Inputs, plate: Inputs, b_d: Entry | None) -> Entry | None:
+    """The width that counts: by spread, or the stated width where that is less.
+
+    `plate` holds the stated width b_p, if any. None where there is no width to go by: the word
+    "not covered" is on the sheet then.
+    """
+    if b_d is None and not plate.has("b_p"):
+        work.not_covered(
+            "yield and rupture",
+            "the force of a single bolt has no width by spread: state the gusset's width",
+            "practice",
+        )
+        return None
     if b_d is None:
-        return end.take(work, "b_p")
-    if not end.has("b_p"):
+        return plate.take(work, "b_p")
+    if not plate.has("b_p"):
         work.assume(
             f"{end.choice('label')}the gusset is at least as wide as the force spreads at the last"
             " bolts or the end of the welds, and the spread is not cut by its edges"
         )
         return b_d
-    return work.least("b_e", b_d, end.take(work, "b_p"), title="width that counts")
+    return work.least("b_e", b_d, plate.take(work, "b_p"), title="width that counts")

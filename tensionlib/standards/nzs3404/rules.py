@@ -29,6 +29,7 @@ RULES = Rules(
     name="NZS 3404",
     factors=FACTORS,
     k_t="k_te",
+    slip_clause="Table 3.3(2)",
     bearing=bearing,
     block=BLOCK,
     not_checked=NOT_CHECKED,

@@ -1,0 +1,551 @@
+"""From an end with any pattern of holes to what its walk is given.
+
+The search happens here: chains across the section opened flat, tear-out blocks, the bolt that
+tears out first. What it chose goes on as inputs, with its measure and the reason in words.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
+from functools import cached_property
+from itertools import combinations
+
+from tensionlib.calculation.inputs import Inputs, Number
+from tensionlib.errors import InputError
+from tensionlib.joints.blocks import Block, least_block
+from tensionlib.joints.bolt_group import (
+    BoltGroup,
+    clear_distance,
+    elastic_shares,
+    most_loaded,
+    worst_tear_out,
+)
+from tensionlib.joints.ends import in_mm
+from tensionlib.joints.holes import Hole
+from tensionlib.joints.opened import Opened, OpenedSheet, element_part, opened
+from tensionlib.joints.parts import Flat, Opening, check_holes
+from tensionlib.joints.paths import Hop, NetPath, least_path
+from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.members.geometry import Seat, seat, thickest
+from tensionlib.members.member import Member
+from tensionlib.standards import Standard
+from tensionlib.steel import Bolt, Section, bolt, grade
+from tensionlib.steel.outline import Properties
+from tensionlib.steel.shapes import outline
+
+_TAN_30 = math.tan(math.pi / 6)
+_FOUND = "found by the search"
+_COUNTED = "from the pattern"
+_WIDE = 1e4  # mm: a gusset whose side edges are not stated
+
+
+@dataclass(frozen=True)
+class Spread:
+    """From where to where the force spreads in the gusset, mm across and along."""
+
+    low: float
+    high: float
+    apart: float
+    reach_low: float
+    reach_high: float
+
+
+@dataclass(frozen=True)
+class Grip:
+    """One element with bolts: its part and holes, the gusset's part and holes, in mm."""
+
+    element: str
+    where: str
+    part: Flat
+    holes: tuple[Opening, ...]
+    plate: Flat
+    plate_holes: tuple[Opening, ...]
+    spread: Spread
+
+    @property
+    def bolts(self) -> tuple[Opening, ...]:
+        return tuple(hole for hole in self.holes if hole.bolt)
+
+
+class PatternGeometry:
+    """The pattern of one end, laid out: holes with their sizes, sheets, grips, shares.
+
+    Raises
+    ------
+    InputError
+        For an element the section does not have, or holes that overlap or leave their part.
+    """
+
+    def __init__(self, member: Member, end: BoltedPattern, standard: Standard) -> None:
+        self.section: Section = member.profile
+        steel = member.material.made_as(self.section.shape)
+        t_y = thickest(self.section)
+        self.strengths = steel.f_y(t_y), steel.f_u(t_y)
+        self.end = end
+        self.place: Seat = seat(self.section, end)
+        self.fastener: Bolt = bolt(end.bolts)
+        self.opened: Opened = opened(self.section)
+        self._sizes = standard.hole_size
+        self.elements: dict[str, list[Opening]] = {}
+        for hole in end.holes.holes:
+            element = self._element(hole)
+            self.elements.setdefault(element, []).append(self._opening(hole))
+        for sheet in self.opened.sheets:
+            if on_it := self.on_sheet(sheet):
+                check_holes(sheet.part, on_it)
+        for element, holes in self.elements.items():
+            self._check_backs(element, holes)
+
+    def _element(self, hole: Hole) -> str:
+        name = hole.element or self.end.to
+        equal = "leg" in self.opened.elements
+        if equal:
+            name = {"long leg": "leg", "short leg": "other leg"}.get(name, name)
+        if name not in self.opened.elements:
+            raise InputError(
+                f"hole {hole.mark}: element {name!r}; {self.section.designation} has"
+                f" {', '.join(map(repr, self.opened.elements))}"
+            )
+        return name
+
+    def _opening(self, hole: Hole) -> Opening:
+        d_f = self.fastener.d_f
+        width, length = self._sizes(d_f, hole.kind)
+        if hole.diameter is not None:
+            width = length = in_mm(hole.diameter)
+            if width <= d_f and hole.bolt:
+                raise InputError(
+                    f"hole {hole.mark}: diameter {width:g} mm; more than the bolt's {d_f:g} mm is"
+                    " due"
+                )
+        if hole.slot == "across":
+            width, length = length, width
+        return Opening(hole.mark, in_mm(hole.x), in_mm(hole.y), width, length, hole.bolt)
+
+    def _check_backs(self, element: str, holes: Sequence[Opening]) -> None:
+        """Refuse holes that run into the plate that stands on this one."""
+        d = self.section.dims
+        name = element.removesuffix(" 1").removesuffix(" 2")
+        shape = self.section.shape.removeprefix("double ")
+        for hole in holes:
+            low, high = hole.y - hole.across / 2, hole.y + hole.across / 2
+            where = f"hole {hole.mark!r} in the {element}, {hole.y:g} mm across"
+            if shape == "angle" and low <= d["t"]:
+                raise InputError(f"{where}: it runs into the other leg, {d['t']:g} mm thick")
+            if shape == "channel" and name == "flange" and low <= d["t_w"]:
+                raise InputError(f"{where}: it runs into the web, {d['t_w']:g} mm thick")
+            if name == "web" and (
+                (shape != "tee" and low <= d["t_f"]) or high >= d["d"] - d["t_f"]
+            ):
+                raise InputError(f"{where}: it runs into a flange, {d['t_f']:g} mm thick")
+            if shape in ("I", "tee") and name == "flange":
+                middle, half = d["b_f"] / 2, d["t_w"] / 2
+                if low < middle + half and high > middle - half:
+                    raise InputError(f"{where}: it runs into the web, {d['t_w']:g} mm thick")
+
+    # The section opened flat --------------------------------------------------------------
+
+    def on_sheet(self, sheet: OpenedSheet) -> tuple[Opening, ...]:
+        """The holes of a sheet, in its own axes."""
+        return tuple(
+            replace(hole, y=sheet.across(element, hole.y))
+            for element, holes in self.elements.items()
+            if element in sheet.places
+            for hole in holes
+        )
+
+    @cached_property
+    def chains(self) -> tuple[tuple[OpenedSheet, NetPath], ...]:
+        """The chain that governs on each sheet with holes."""
+        sheets = [sheet for sheet in self.opened.sheets if self.on_sheet(sheet)]
+        credit = self.end.credit_behind
+        if credit and len(sheets) > 1:
+            raise InputError(
+                "credit_behind: offered where all holes lie in one sheet, as an angle's two legs;"
+                f" {self.section.designation} has holes in {len(sheets)}"
+            )
+        gross = self.section.A / self.opened.components
+        return tuple(
+            (
+                sheet,
+                least_path(
+                    sheet.part,
+                    self.on_sheet(sheet),
+                    credit_behind=credit,
+                    gross=gross if credit else None,
+                ),
+            )
+            for sheet in sheets
+        )
+
+    # Bolts --------------------------------------------------------------------------------
+
+    @cached_property
+    def grips(self) -> tuple[Grip, ...]:
+        """Every element with bolts, the one on the gusset first."""
+        named = [e for e, holes in self.elements.items() if any(h.bolt for h in holes)]
+        several = len(named) > 1
+        return tuple(self._grip(element, f", {element}" if several else "") for element in named)
+
+    def _grip(self, element: str, where: str) -> Grip:
+        holes = tuple(self.elements[element])
+        bolts = [hole for hole in holes if hole.bolt]
+        last = max(b.x for b in bolts)
+        stated = self.end.plate_end_distance
+        edge = last + (min(b.x for b in bolts) if stated is None else in_mm(stated))
+        side = self.end.plate_edge_distance
+        beside = _WIDE if side is None else in_mm(side)
+        zero = min(b.y for b in bolts) - beside
+        width = max(b.y for b in bolts) + beside - zero
+        t_p = in_mm(self.end.plate.thickness)
+        free = side is not None
+        plate = Flat.plain(width, t_p, low_free=free, high_free=free)
+        # Only the joint's own holes are in the gusset.
+        plate_holes = tuple(replace(b, x=edge - b.x, y=b.y - zero) for b in bolts)
+        check_holes(plate, plate_holes)
+        return Grip(
+            element,
+            where,
+            element_part(self.section, element),
+            holes,
+            plate,
+            plate_holes,
+            _spread(bolts),
+        )
+
+    @cached_property
+    def bolts(self) -> tuple[Opening, ...]:
+        return tuple(b for grip in self.grips for b in grip.bolts)
+
+    @cached_property
+    def group(self) -> BoltGroup:
+        """Each bolt's share of the force."""
+        if self.end.share == "equal":
+            return elastic_shares(self.bolts, None)
+        if len(self.grips) > 1:
+            raise InputError(
+                "share: 'elastic' is offered for bolts through one element; give share='equal'"
+            )
+        return elastic_shares(self.bolts, self.member_line)
+
+    @cached_property
+    def member_line(self) -> float:
+        """Where the member's centroid lies across the element on the gusset, mm."""
+        section, element = self.section, self.grips[0].element
+        at: float | None
+        shape = section.shape.removeprefix("double ")
+        if shape == "angle":
+            # A pair's own centroid lies in the gap; each component's counts across the leg.
+            one = Properties.of(outline("angle", section.dims).moments())
+            at = one.x_c if element in ("short leg", "other leg") else one.y_c
+        elif shape == "tee" and element == "web":
+            at = section.y_c
+        else:
+            name = element.removesuffix(" 1").removesuffix(" 2")
+            at = section.x_c if (shape, name) == ("channel", "flange") else section.leg(name) / 2
+        if at is None:
+            raise InputError(
+                f"share: 'elastic' needs the centroid of {section.designation}, which states none"
+            )
+        return at
+
+    @property
+    def joint_length(self) -> float:
+        xs = [b.x for b in self.bolts]
+        return max(xs) - min(xs)
+
+
+def _spread(bolts: Sequence[Opening]) -> Spread:
+    last = min(b.x for b in bolts)
+    low = min(bolts, key=lambda b: b.y - (b.x - last) * _TAN_30)
+    high = max(bolts, key=lambda b: b.y + (b.x - last) * _TAN_30)
+    return Spread(
+        low.y - (low.x - last) * _TAN_30,
+        high.y + (high.x - last) * _TAN_30,
+        high.y - low.y,
+        low.x - last,
+        high.x - last,
+    )
+
+
+# Inputs -----------------------------------------------------------------------------------
+
+
+def pattern_numbers(
+    shape: PatternGeometry, standard: Standard, prefix: str
+) -> tuple[dict[str, Number], dict[str, str], dict[str, tuple[Inputs, ...]]]:
+    """Numbers, choices and parts of a pattern end, beside what every bolted end has."""
+    end, group = shape.end, shape.group
+    bolts = shape.bolts
+    numbers = {
+        "n_c": Number(float(shape.opened.components), _COUNTED),
+        "n_b": Number(float(len(bolts)), _COUNTED),
+    }
+    if shape.joint_length > 0.0:
+        numbers["L_j"] = Number(shape.joint_length, "first bolt to last, from the pattern")
+    if end.share == "elastic":
+        numbers["e_b"] = Number(group.e, "member's centroid and the bolts' centroid")
+        numbers["I_b"] = Number(group.I_p, _COUNTED)
+    chain, chain_parts, behind = _chain_inputs(shape, prefix)
+    if behind is not None:
+        numbers["n_k"] = Number(behind, _FOUND)
+    numbers |= _spacing(shape)
+    drilled = {h.mark: h for h in end.holes.holes}
+    play = sorted(
+        f"hole {b.mark}, {drilled[b.mark].kind}"
+        for b in bolts
+        if drilled[b.mark].kind == "oversize"
+        or (drilled[b.mark].kind.endswith("slot") and drilled[b.mark].slot == "along")
+    )
+    kinds = [drilled[b.mark].kind for b in bolts]
+    worst = next(k for k in ("long slot", "short slot", "oversize", "standard") if k in kinds)
+    connected = {grip.element for grip in shape.grips}
+    choices = {
+        "share": end.share,
+        "block_tension": end.block_tension,
+        "chain": chain,
+        "all_elements": "yes" if connected == set(shape.opened.elements) else "no",
+        "play": "; ".join(play) if play and shape.fastener.category != "TF" else "none",
+        "hole_kind": worst,
+    }
+    most = most_loaded(group)
+    parts = {
+        "chain": chain_parts,
+        "most loaded": (_bolt_inputs(group, most.mark, prefix + "most loaded ", {}),),
+        "grips": tuple(
+            _grip_inputs(shape, grip, standard, f"{prefix}grip {i} ")
+            for i, grip in enumerate(shape.grips, start=1)
+        ),
+        "edges": _edges(shape, prefix),
+    }
+    return numbers, choices, parts
+
+
+def _hop_inputs(hops: Sequence[Hop], usual: float, prefix: str) -> tuple[Inputs, ...]:
+    found = []
+    for k, hop in enumerate(hops, start=1):
+        numbers = {"d_h": Number(hop.hole.across, f"hole {hop.hole.mark}")}
+        if hop.t != usual:
+            numbers["t"] = Number(hop.t, f"at hole {hop.hole.mark}")
+        if hop.s > 0.0:
+            step = f"to hole {hop.hole.mark}"
+            numbers |= {"s": Number(hop.s, step), "g": Number(hop.g, step)}
+            if hop.t_step != hop.t:
+                numbers["t_s"] = Number(hop.t_step, step + ", the thinner plate")
+        found.append(Inputs({"mark": hop.hole.mark}, numbers, {}, f"{prefix}hole {k}: "))
+    return tuple(found)
+
+
+def _chain_words(hops: Sequence[Hop]) -> str:
+    marks = [hop.hole.mark for hop in hops]
+    return ("hole " if len(marks) == 1 else "holes ") + " – ".join(marks)
+
+
+def _chain_inputs(
+    shape: PatternGeometry, prefix: str
+) -> tuple[str, tuple[Inputs, ...], float | None]:
+    hops: list[Inputs] = []
+    words = []
+    behind = None
+    for i, (_, path) in enumerate(shape.chains, start=1):
+        hops += _hop_inputs(path.hops, shape.place.thickness, f"{prefix}chain {i} ")
+        words.append(_chain_words(path.hops))
+        if shape.end.credit_behind:
+            behind = float(round((1.0 - path.carried) * len(shape.bolts)))
+    return "; ".join(words), tuple(hops), behind
+
+
+def _bolt_inputs(
+    group: BoltGroup, mark: str, prefix: str, more: dict[str, Number], **choices: str
+) -> Inputs:
+    share = next(s for s in group.shares if s.mark == mark)
+    numbers = dict(more)
+    if group.e != 0.0:
+        numbers |= {
+            "x_b": Number(share.x, f"bolt {mark}"),
+            "y_b": Number(share.y, f"bolt {mark}"),
+        }
+    return Inputs({"mark": mark, **choices}, numbers, {}, prefix)
+
+
+def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix: str) -> Inputs:
+    end, section = shape.end, shape.section
+    uniform = end.block_tension == "uniform"
+    t = grip.part.strips[0].t
+    plate_steel = grade(end.plate.steel, "plate.steel")
+    t_p = in_mm(end.plate.thickness)
+    total = len(shape.bolts)
+    plate_numbers = {
+        "n_e": Number(1.0, _COUNTED),
+    }
+    if end.plate.width is not None:
+        width = in_mm(end.plate.width)
+        needed = grip.spread.apart + max(b.across for b in grip.bolts)
+        if width <= needed:
+            raise InputError(
+                f"plate.width: got {width:g} mm; more than {needed:g} mm, from the outer edges of"
+                " the holes, is due"
+            )
+        plate_numbers["b_p"] = Number(width, "given")
+    spread = grip.spread
+    if spread.high > spread.low:
+        plate_numbers |= {
+            "s_o": Number(spread.apart, _COUNTED),
+            "L_o1": Number(spread.reach_low, _COUNTED),
+            "L_o2": Number(spread.reach_high, _COUNTED),
+        }
+    plate_chain = least_path(grip.plate, grip.plate_holes)
+    plate = Inputs(
+        {"part": "gusset", "chain": _chain_words(plate_chain.hops)},
+        plate_numbers,
+        {},
+        prefix + "plate: ",
+        {
+            "tear-out": (_tear_out(shape, grip.plate, grip.plate_holes, prefix + "plate ", 1.0),),
+            "chain": _hop_inputs(plate_chain.hops, t_p, prefix + "plate chain "),
+            "block": _block_inputs(
+                least_block(
+                    grip.plate,
+                    grip.plate_holes,
+                    standard.block_forms(plate_steel.f_y(t_p), plate_steel.f_u(t_p), uniform),
+                    edge_to_edge=False,
+                ),
+                total,
+                prefix + "plate ",
+            ),
+        },
+    )
+    # A surface from edge to edge is a net section with a step in shear: the net section itself
+    # is weaker, and checked.
+    block = least_block(
+        grip.part,
+        grip.holes,
+        standard.block_forms(*shape.strengths, uniform),
+        edge_to_edge=False,
+    )
+    numbers = {
+        "n_e": Number(float(shape.opened.components), _COUNTED),
+        "n_m": Number(float(len(grip.bolts)), _COUNTED),
+    }
+    if t != shape.place.thickness:
+        numbers["t"] = Number(t, section.source)
+    return Inputs(
+        {"part": "member", "where": grip.where},
+        numbers,
+        {},
+        prefix + "member: ",
+        {
+            "tear-out": (_tear_out(shape, grip.part, grip.holes, prefix + "member ", -1.0),),
+            "block": _block_inputs(block, total, prefix + "member "),
+            "plate": (plate,),
+        },
+    )
+
+
+def _tear_out(
+    shape: PatternGeometry, part: Flat, holes: Sequence[Opening], prefix: str, sign: float
+) -> Inputs:
+    """The bolt with the greatest force on its tear-out capacity, and its clear distance."""
+    half = shape.fastener.d_f / 2
+    shares = {s.mark: s for s in shape.group.shares}
+    # A part's own axes run from its free end inwards, so the bolt presses towards -x; across, it
+    # presses as the member is pulled on the gusset and against that on the member.
+    clear = {
+        hole.mark: clear_distance(
+            part,
+            holes,
+            hole,
+            direction=(-shares[hole.mark].along, sign * shares[hole.mark].across),
+        )
+        for hole in holes
+        if hole.bolt
+    }
+    here = replace(shape.group, shares=tuple(shares[mark] for mark in clear))
+    worst = worst_tear_out(here, {mark: l_c + half for mark, l_c in clear.items()}).mark
+    to = "to the nearest edge or hole in its way"
+    number = Number(clear[worst], f"bolt {worst}, {_FOUND}")
+    return _bolt_inputs(shape.group, worst, prefix + "tear-out: ", {"l_c": number}, to=to)
+
+
+def _block_inputs(found: Block | None, bolts: int, prefix: str) -> tuple[Inputs, ...]:
+    if found is None:
+        return ()
+    shear = [piece for piece in found.pieces if piece.kind == "shear"]
+    tension = [piece for piece in found.pieces if piece.kind == "tension"]
+
+    def added(values: list[float]) -> str:
+        return " + ".join(f"{value:.5g}" for value in values if value) or "0"
+
+    def total(values: list[float]) -> Number:
+        return Number(math.fsum(values), f"{added(values)} mm, {_FOUND}")
+
+    numbers = {
+        "L_gv": total([p.gross for p in shear]),
+        "h_v": total([p.lost for p in shear]),
+        "b_gt": total([p.gross for p in tension]),
+        "h_t": total([p.lost for p in tension]),
+    }
+    if any(p.credit for p in tension):
+        numbers["c_t"] = total([p.credit for p in tension])
+    if len(found.separated) < bolts:
+        numbers["n_sb"] = Number(float(len(found.separated)), _FOUND)
+    marks = list(dict.fromkeys(found.marks))
+    words = f"through hole{'s' if len(marks) > 1 else ''} {', '.join(marks)}"
+    return (
+        Inputs(
+            {"words": words, "separated": ", ".join(found.separated)},
+            numbers,
+            {},
+            prefix + "block: ",
+        ),
+    )
+
+
+def _spacing(shape: PatternGeometry) -> dict[str, Number]:
+    """Distances between bolts of one element: the nearest two, and the loneliest one."""
+    nearest: dict[str, tuple[float, str]] = {}
+    for grip in shape.grips:
+        for a, b in combinations(grip.bolts, 2):
+            apart = math.hypot(a.x - b.x, a.y - b.y)
+            for one, other in ((a, b), (b, a)):
+                if one.mark not in nearest or apart < nearest[one.mark][0]:
+                    nearest[one.mark] = (apart, f"bolts {one.mark} and {other.mark}")
+    if not nearest:
+        return {}
+    near, far = min(nearest.values()), max(nearest.values())
+    return {"s_near": Number(*near), "s_far": Number(*far)}
+
+
+def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
+    """Every edge with the bolt nearest to it."""
+    end, cut = shape.end, shape.end.edge_kind
+    found: list[tuple[str, str, float, str, float | None]] = []
+    for grip in shape.grips:
+        own, bolts = grip.part.strips[0].t, grip.bolts
+        t = None if own == shape.place.thickness else own
+        first = min(bolts, key=lambda b: b.x)
+        found.append((f"member end{grip.where}", cut, first.x, first.mark, t))
+        sides = [(min(grip.part.to_low(b.x, b.y), grip.part.to_high(b.x, b.y)), b) for b in bolts]
+        side, at = min(sides, key=lambda pair: pair[0])
+        if math.isfinite(side):
+            found.append((f"member side{grip.where}", "rolled", side, at.mark, t))
+        holes = [hole for hole in grip.plate_holes if hole.bolt]
+        first = min(holes, key=lambda b: b.x)
+        found.append((f"gusset end{grip.where}", cut, first.x, first.mark, None))
+        if end.plate_edge_distance is not None:
+            side = in_mm(end.plate_edge_distance)
+            found.append((f"gusset side{grip.where}", cut, side, "the outer ones", None))
+    return tuple(
+        Inputs(
+            {"number": str(k), "of": of, "cut": how, "part": of.partition(" ")[0]},
+            {
+                "e": Number(e, f"bolt {mark}"),
+                **({} if t is None else {"t": Number(t, shape.section.source)}),
+            },
+            {},
+            f"{prefix}edge {k}: ",
+        )
+        for k, (of, how, e, mark, t) in enumerate(found, start=1)
+    )

@@ -1,0 +1,74 @@
+"""Elastic section moduli and the slenderness of a section's plates, for bending beside tension.
+
+All lengths in mm, moduli in mm³.
+"""
+
+from __future__ import annotations
+
+from tensionlib.errors import InputError
+from tensionlib.steel import shapes
+from tensionlib.steel.outline import Circle, Properties
+from tensionlib.steel.sections import Section
+
+
+def elastic_moduli(section: Section) -> tuple[float, float]:
+    """Effective elastic moduli for a moment about x alone and about y alone.
+
+    The stress at every corner of the outline is that of unsymmetrical bending, so that an angle
+    bent about an axis parallel to a leg counts its product of inertia; corners count sharp, which
+    is on the safe side. Axes of `shapes`.
+
+    Raises
+    ------
+    InputError
+        For a section given by stated properties alone.
+    """
+    shape = section.shape.removeprefix("double ")
+    if shape not in shapes.DIMENSIONS:
+        raise InputError(
+            f"section: {section.designation} has no outline, so no section modulus is known; give"
+            " a catalogue section for a member that bends"
+        )
+    outline = shapes.outline(shape, section.dims)
+    one = Properties.of(outline.moments())
+    if isinstance(outline.outer, Circle):
+        r = outline.outer.r
+        return one.I_x / r, one.I_y / r
+    points = [(c.x - one.x_c, c.y - one.y_c) for c in outline.outer]
+    I_x, I_y, I_xy = one.I_x, one.I_y, one.I_xy
+    if section.shape != shape:
+        # A pair is symmetrical about the middle of its gap.
+        half = section.dims["gap"] / 2
+        assert section.I_x is not None
+        assert section.I_y is not None
+        I_x, I_y, I_xy = section.I_x, section.I_y, 0.0
+        if section.facing == "short leg":
+            points = [(x, y + one.y_c + half) for x, y in points]
+        else:
+            points = [(x + one.x_c + half, y) for x, y in points]
+    spread = I_x * I_y - I_xy * I_xy
+    Z_x = min(spread / abs(I_y * y - I_xy * x) for x, y in points if abs(I_y * y - I_xy * x) > 0.0)
+    Z_y = min(spread / abs(I_x * x - I_xy * y) for x, y in points if abs(I_x * x - I_xy * y) > 0.0)
+    return Z_x, Z_y
+
+
+def outstand(section: Section) -> tuple[float, float] | None:
+    """Clear width and thickness of the most slender outstanding plate; None where there is none.
+
+    Legs of an angle, halves of a flange, the stem of a tee; the plates of a tube and the web of a
+    channel or an I are held along both edges and are not outstands.
+    """
+    d = section.dims
+    match section.shape.removeprefix("double "):
+        case "angle":
+            return d["b1"] - d["t"], d["t"]
+        case "channel":
+            return d["b_f"] - d["t_w"], d["t_f"]
+        case "I":
+            return (d["b_f"] - d["t_w"]) / 2, d["t_f"]
+        case "tee":
+            flange = (d["b_f"] - d["t_w"]) / 2, d["t_f"]
+            stem = d["d"] - d["t_f"], d["t_w"]
+            return max(flange, stem, key=lambda plate: plate[0] / plate[1])
+        case _:
+            return None
