@@ -30,7 +30,10 @@ if TYPE_CHECKING:
     from tensionlib.joints.holes import Hole as Hole
     from tensionlib.joints.holes import Pattern as Pattern
     from tensionlib.joints.pattern_end import BoltedPattern as BoltedPattern
+    from tensionlib.joints.pattern_end import Covers as Covers
     from tensionlib.joints.pattern_end import as_pattern as as_pattern
+    from tensionlib.members.beside import Across as Across
+    from tensionlib.members.beside import Overstrength as Overstrength
     from tensionlib.members.design import design as design
     from tensionlib.members.member import Member as Member
     from tensionlib.package.issue import issue as issue
@@ -48,16 +51,19 @@ if TYPE_CHECKING:
     from tensionlib.steel import stated as stated
 
 _WHERE = {
+    "Across": "members.beside",
     "Bolted": "joints.ends",
     "BoltedPattern": "joints.pattern_end",
     "Calculation": "calculation.result",
     "Check": "calculation.result",
     "Constant": "calculation.formula",
+    "Covers": "joints.pattern_end",
     "Gusset": "joints.ends",
     "Hole": "joints.holes",
     "METRIC": "quantities",
     "Member": "members.member",
     "Notation": "calculation.symbols",
+    "Overstrength": "members.beside",
     "Pattern": "joints.holes",
     "Source": "calculation.symbols",
     "Symbol": "calculation.symbols",

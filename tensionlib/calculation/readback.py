@@ -165,8 +165,10 @@ class _Parser:
     def _unit(self) -> float:
         start = self._skip()
         for latex in sorted(self.units, key=len, reverse=True):
-            if latex and self.text.startswith(latex, start):
-                self.at = start + len(latex)
+            # A unit with a scale of its own, "10⁶ mm⁴", is printed as a factor.
+            printed = r"\cdot " + latex if latex.startswith("10^") else latex
+            if latex and self.text.startswith(printed, start):
+                self.at = start + len(printed)
                 return self.units[latex]
         return 1.0
 

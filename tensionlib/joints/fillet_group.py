@@ -14,6 +14,8 @@ from dataclasses import dataclass
 from tensionlib.errors import InputError
 from tensionlib.joints.bolt_group import first_of_greatest
 
+_ROUNDING = 1e-6  # mm: what rounding does to a run as wide as the leg
+
 
 @dataclass(frozen=True, slots=True)
 class Run:
@@ -188,10 +190,9 @@ def balanced_runs(
             raise InputError(f"{name}: got {lever!r} mm; more than 0 mm is due")
     width = lever_low + lever_high
     at = width / 2 if transverse_at is None else transverse_at
-    if not 0.0 <= transverse <= width:
+    if not 0.0 <= transverse <= width + _ROUNDING:
         raise InputError(f"transverse: got {transverse!r} mm; 0 to {width:g} mm is due")
-    # Half a micron for what rounding does to a run as wide as the leg.
-    if not transverse / 2 - 5e-4 <= at <= width - transverse / 2 + 5e-4:
+    if not transverse / 2 - _ROUNDING <= at <= width - transverse / 2 + _ROUNDING:
         raise InputError(
             f"transverse_at: got {at!r} mm; {transverse / 2:g} to {width - transverse / 2:g} mm is"
             f" due, that a run of {transverse:g} mm fits between the edges"

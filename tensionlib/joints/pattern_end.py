@@ -18,11 +18,36 @@ from tensionlib.joints.ends import (
     in_mm,
 )
 from tensionlib.joints.holes import Pattern
-from tensionlib.quantities import LENGTH, quantity
+from tensionlib.quantities import LENGTH, count, quantity
 from tensionlib.steel import Section, bolt
 
 SHARES = ("equal", "elastic")
 TENSIONS = ("uniform", "non-uniform")
+
+
+@dataclass(frozen=True)
+class Covers(Gusset):
+    """Cover plates of a splice, in place of a gusset: one each side of the element, or one alone.
+
+    Parameters
+    ----------
+    thickness, steel
+        Of each plate.
+    width : length
+        Of each plate, across the force; due.
+    number : int
+        2 for a plate on both sides, 1 for one alone.
+    """
+
+    number: int = 2
+
+    def __post_init__(self) -> None:
+        super().__post_init__()
+        if self.width is None:
+            raise InputError("width: missing; a cover plate needs it, for example '150 mm'")
+        object.__setattr__(self, "number", count("number", self.number, at_least=1))
+        if self.number > 2:
+            raise InputError(f"number: got {self.number}; 1 or 2 cover plates are accepted")
 
 
 @dataclass(frozen=True)
@@ -38,7 +63,8 @@ class BoltedPattern(Stated):
     holes : Pattern
         Every hole of the end. A bolt through another element than `to` is taken to a plate like
         the gusset through a lug or a plate of its own, and carries the same force as the others.
-    plate : Gusset
+    plate : Gusset or Covers
+        The cover plates of a splice take the place of the gusset.
     plate_end_distance : length, optional
         Last bolt to the edge of the gusset that lies across the member; the member's own end
         distance unless given.

@@ -89,7 +89,7 @@ def design(
         )
         for i, end in enumerate(member.ends, start=1)
     )
-    inputs = member_inputs(member)
+    inputs = member_inputs(member, served)
     if isinstance(force, Entry):
         work, N_star = _continued(force, chosen.notation)
         chosen.design(work, inputs, ends, N_star)

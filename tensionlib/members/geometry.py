@@ -92,7 +92,7 @@ def seat(section: Section, end: End) -> Seat:
         width=section.leg(element),
         plies=2 if double or both else 1,
         gussets=2 if both else 1,
-        planes=2 if double else 1,
+        planes=2 if double or getattr(end.plate, "number", 1) == 2 else 1,
         lines_from="heel" if end.to in _LEGS or (both and section.shape == "channel") else "middle",
         free_edge=end.to != "web",
     )

@@ -8,6 +8,7 @@ from typing import Any
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.members.beside import Across, Overstrength
 from tensionlib.quantities import LENGTH, Quantity, door
 from tensionlib.steel import Grade, Section, grade, section
 
@@ -32,6 +33,12 @@ class Member:
     far_end : the same, optional
     title : str
         What the member is: "roof brace, grid B".
+    across : Across, optional
+        Loads across the member and offsets of its force: tension with bending, and sag.
+    overstrength : Overstrength, optional
+        For a brace that yields in an earthquake.
+    ties : length, optional
+        Spacing of the bolts or welds that tie the two components of a pair together.
 
     Raises
     ------
@@ -46,6 +53,9 @@ class Member:
     end: End
     far_end: End | None = None
     title: str = ""
+    across: Across | None = None
+    overstrength: Overstrength | None = None
+    ties: Quantity | str | None = None
 
     def __post_init__(self) -> None:
         for name in ("mark", "title"):
@@ -68,10 +78,21 @@ class Member:
             raise InputError(
                 f"steel: got {self.steel!r}; a grade is due, for example 'AS/NZS 3679.1 300'"
             )
+        for name, due in (("across", Across), ("overstrength", Overstrength)):
+            value = getattr(self, name)
+            if value is not None and not isinstance(value, due):
+                raise InputError(f"{name}: got {value!r}; {due.__name__}(...) is due")
+        if self.ties is not None:
+            ties = door("ties", self.ties, LENGTH, above=0.0, example="1500 mm")
+            object.__setattr__(self, "ties", ties)
+            if not self.profile.shape.startswith("double "):
+                raise InputError(
+                    f"ties: given for {self.profile.designation}, which is one piece; leave it out"
+                )
         for name in ("end", "far_end"):
             end = getattr(self, name)
             if not isinstance(end, End) and not (end is None and name == "far_end"):
-                raise InputError(f"{name}: got {end!r}; an end is due, as Bolted(...)")
+                raise InputError(f"{name}: got {end!r}; an end is due, for example Bolted(...)")
 
     @property
     def ends(self) -> tuple[End, ...]:

@@ -27,7 +27,7 @@ from tensionlib.joints.holes import Hole
 from tensionlib.joints.opened import Opened, OpenedSheet, element_part, opened
 from tensionlib.joints.parts import Flat, Opening, check_holes
 from tensionlib.joints.paths import Hop, NetPath, least_path
-from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pattern_end import BoltedPattern, Covers
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import Member
 from tensionlib.standards import Standard
@@ -195,8 +195,8 @@ class PatternGeometry:
         last = max(b.x for b in bolts)
         stated = self.end.plate_end_distance
         edge = last + (min(b.x for b in bolts) if stated is None else in_mm(stated))
-        side = self.end.plate_edge_distance
-        beside = _WIDE if side is None else in_mm(side)
+        side = self.plate_side(bolts)
+        beside = _WIDE if side is None else side
         zero = min(b.y for b in bolts) - beside
         width = max(b.y for b in bolts) + beside - zero
         t_p = in_mm(self.end.plate.thickness)
@@ -214,6 +214,24 @@ class PatternGeometry:
             plate_holes,
             _spread(bolts),
         )
+
+    def plate_side(self, bolts: Sequence[Opening]) -> float | None:
+        """Outer bolt to the side edge of the plate, mm; None where it is not stated."""
+        stated, plate = self.end.plate_edge_distance, self.end.plate
+        if stated is None and isinstance(plate, Covers):
+            ys = [b.y for b in bolts]
+            return (in_mm(plate.width) - (max(ys) - min(ys))) / 2
+        return None if stated is None else in_mm(stated)
+
+    @property
+    def spliced(self) -> bool:
+        """Whether cover plates take the place of a gusset."""
+        return isinstance(self.end.plate, Covers)
+
+    @property
+    def plates(self) -> int:
+        """Plates that share the force: two cover plates, or one gusset."""
+        return self.end.plate.number if isinstance(self.end.plate, Covers) else 1
 
     @cached_property
     def bolts(self) -> tuple[Opening, ...]:
@@ -306,6 +324,7 @@ def pattern_numbers(
         "share": end.share,
         "block_tension": end.block_tension,
         "chain": chain,
+        "plate": "Cover plates" if shape.spliced else "Gusset",
         "all_elements": "yes" if connected == set(shape.opened.elements) else "no",
         "play": "; ".join(play) if play and shape.fastener.category != "TF" else "none",
         "hole_kind": worst,
@@ -313,7 +332,7 @@ def pattern_numbers(
     most = most_loaded(group)
     parts = {
         "chain": chain_parts,
-        "most loaded": (_bolt_inputs(group, most.mark, prefix + "most loaded ", {}),),
+        "most loaded": (_bolt_inputs(shape, most.mark, prefix + "most loaded ", {}),),
         "grips": tuple(
             _grip_inputs(shape, grip, standard, f"{prefix}grip {i} ")
             for i, grip in enumerate(shape.grips, start=1)
@@ -358,11 +377,11 @@ def _chain_inputs(
 
 
 def _bolt_inputs(
-    group: BoltGroup, mark: str, prefix: str, more: dict[str, Number], **choices: str
+    shape: PatternGeometry, mark: str, prefix: str, more: dict[str, Number], **choices: str
 ) -> Inputs:
-    share = next(s for s in group.shares if s.mark == mark)
     numbers = dict(more)
-    if group.e != 0.0:
+    if shape.end.share == "elastic":
+        share = next(s for s in shape.group.shares if s.mark == mark)
         numbers |= {
             "x_b": Number(share.x, f"bolt {mark}"),
             "y_b": Number(share.y, f"bolt {mark}"),
@@ -378,7 +397,7 @@ def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix:
     t_p = in_mm(end.plate.thickness)
     total = len(shape.bolts)
     plate_numbers = {
-        "n_e": Number(1.0, _COUNTED),
+        "n_e": Number(float(shape.plates), _COUNTED),
     }
     if end.plate.width is not None:
         width = in_mm(end.plate.width)
@@ -466,7 +485,7 @@ def _tear_out(
     worst = worst_tear_out(here, {mark: l_c + half for mark, l_c in clear.items()}).mark
     to = "to the nearest edge or hole in its way"
     number = Number(clear[worst], f"bolt {worst}, {_FOUND}")
-    return _bolt_inputs(shape.group, worst, prefix + "tear-out: ", {"l_c": number}, to=to)
+    return _bolt_inputs(shape, worst, prefix + "tear-out: ", {"l_c": number}, to=to)
 
 
 def _block_inputs(found: Block | None, bolts: int, prefix: str) -> tuple[Inputs, ...]:
@@ -520,7 +539,7 @@ def _spacing(shape: PatternGeometry) -> dict[str, Number]:
 
 def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
     """Every edge with the bolt nearest to it."""
-    end, cut = shape.end, shape.end.edge_kind
+    cut = shape.end.edge_kind
     found: list[tuple[str, str, float, str, float | None]] = []
     for grip in shape.grips:
         own, bolts = grip.part.strips[0].t, grip.bolts
@@ -534,12 +553,17 @@ def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
         holes = [hole for hole in grip.plate_holes if hole.bolt]
         first = min(holes, key=lambda b: b.x)
         found.append((f"gusset end{grip.where}", cut, first.x, first.mark, None))
-        if end.plate_edge_distance is not None:
-            side = in_mm(end.plate_edge_distance)
-            found.append((f"gusset side{grip.where}", cut, side, "the outer ones", None))
+        beside = shape.plate_side(bolts)
+        if beside is not None:
+            found.append((f"gusset side{grip.where}", cut, beside, "nearest the edge", None))
     return tuple(
         Inputs(
-            {"number": str(k), "of": of, "cut": how, "part": of.partition(" ")[0]},
+            {
+                "number": str(k),
+                "of": of.replace("gusset", "cover plate") if shape.spliced else of,
+                "cut": how,
+                "part": of.partition(" ")[0],
+            },
             {
                 "e": Number(e, f"bolt {mark}"),
                 **({} if t is None else {"t": Number(t, shape.section.source)}),

@@ -8,18 +8,21 @@ from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.joints.ends import Bolted, Gusset, Welded, in_mm
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.members.beside import Across
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
 from tensionlib.standards import Standard
 from tensionlib.steel import Grade, bolt, grade, weld_metal
+from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
 
 _STATED = "given"
+GRAVITY = 9.81e-3  # N for a kg/m of mass on a mm of length
 _COUNTED = "from the connection"
 
 
-def member_inputs(member: Member) -> Inputs:
-    """Numbers, choices and tables of the member itself."""
+def member_inputs(member: Member, service: Number | None) -> Inputs:
+    """Numbers, choices and tables of the member itself; `service` is its force in service."""
     section = member.profile
     steel = member.material.made_as(section.shape)
     source = section.source
@@ -32,9 +35,59 @@ def member_inputs(member: Member) -> Inputs:
         numbers["r_min"] = Number(section.r_min, source)
     if "d" in section.dims:
         numbers["d"] = Number(section.dims["d"], source)
-    return Inputs(
-        {"shape": section.shape}, numbers, _tables(steel, "f_y", "f_u", "the section"), "member: "
-    )
+    if service is not None:
+        numbers["N_star_ser"] = service
+    seismic = member.overstrength
+    if seismic is not None and seismic.factor is not None:
+        numbers["phi_oms"] = Number(seismic.factor, _STATED)
+    if member.ties is not None:
+        numbers["L_s"] = Number(in_mm(member.ties), _STATED)
+        numbers["r_c"] = Number(component_radius(section), section.source)
+    beside = member.across
+    bending: tuple[Inputs, ...] = ()
+    if beside is not None:
+        for name, limit in (("Delta_max", "sag_limit"), ("Delta_Lmax", "stretch_limit")):
+            if getattr(beside, limit) is not None:
+                numbers[name] = Number(in_mm(getattr(beside, limit)), _STATED)
+        bending = (_bending(member, beside),)
+    choices = {
+        "shape": section.shape,
+        "category": "none" if seismic is None else seismic.category,
+    }
+    tables = _tables(steel, "f_y", "f_u", "the section")
+    return Inputs(choices, numbers, tables, "member: ", {"bending": bending})
+
+
+def _bending(member: Member, beside: Across) -> Inputs:
+    """What bends the member: loads, offsets, moduli, its most slender outstand."""
+    section = member.profile
+    Z_x, Z_y = elastic_moduli(section)
+    computed = "computed from the outline, first yield at its worst corner"
+    numbers = {"Z_ex": Number(Z_x, computed), "Z_ey": Number(Z_y, computed)}
+    plate = outstand(section)
+    if plate is not None:
+        numbers |= {
+            name: Number(x, section.source) for name, x in zip(("b_s", "t_o"), plate, strict=True)
+        }
+    span = member.length if beside.span is None else beside.span
+    numbers["L_b"] = Number(in_mm(span), _STATED)
+    load = in_mm(beside.load)
+    if beside.self_weight or load:
+        weight = section.mass * GRAVITY if beside.self_weight else 0.0
+        origin = f"{section.mass:.4g} kg/m at 9.81 m/s²" if beside.self_weight else "left out"
+        numbers |= {
+            "w_g": Number(weight, origin),
+            "gamma_g": Number(beside.weight_factor, _STATED),
+            "w_x": Number(load, _STATED),
+        }
+        if section.I_x is not None:
+            numbers["I_sag"] = Number(section.I_x, section.source)
+    if in_mm(beside.side_load):
+        numbers["w_y"] = Number(in_mm(beside.side_load), _STATED)
+    for name, offset in (("e_x", beside.offset_x), ("e_y", beside.offset_y)):
+        if in_mm(offset):
+            numbers[name] = Number(in_mm(offset), _STATED)
+    return Inputs({}, numbers, {}, "across: ")
 
 
 def end_inputs(
@@ -73,7 +126,17 @@ def end_inputs(
     # Either leg of an equal angle is the same leg.
     equal = section.shape == "angle" and section.dims["b1"] == section.dims["b2"]
     to = "leg" if equal else end.to
-    choices = {"label": label, "kind": end.kind, "to": to, "shape": section.shape}
+    seismic = member.overstrength
+    yields = seismic is not None and seismic.category != "4"
+    choices = {
+        "label": label,
+        "kind": end.kind,
+        "to": to,
+        "shape": section.shape,
+        "earthquake": "yes" if yields else "no",
+    }
+    if seismic is not None and seismic.bearing_factor is not None:
+        common["C_1"] = Number(seismic.bearing_factor, _STATED)
     plate_steel = grade(end.plate.steel, "plate.steel")
     plate_steel.suits("plate", "plate.steel")
     tables = _tables(plate_steel, "f_yp", "f_up", "the gusset")

@@ -72,3 +72,9 @@ def outstand(section: Section) -> tuple[float, float] | None:
             return max(flange, stem, key=lambda plate: plate[0] / plate[1])
         case _:
             return None
+
+
+def component_radius(section: Section) -> float:
+    """Least radius of gyration of one component of a pair, or of a single section, mm."""
+    shape = section.shape.removeprefix("double ")
+    return Properties.of(shapes.outline(shape, section.dims).moments()).r_min

@@ -42,6 +42,13 @@ RANGES = {
     "stress": (200.0, 900.0),
     "weld strength": (100.0, 3000.0),
     "factor": (0.3, 1.5),
+    "moment": (1e5, 1e8),
+    "section modulus": (1e4, 1e6),
+    "inertia": (1e6, 1e9),
+    "weight per length": (0.05, 5.0),
+    "force per length": (50.0, 3000.0),
+    "elastic modulus": (1.9e5, 2.1e5),
+    "angle": (0.1, 1.4),
 }
 
 

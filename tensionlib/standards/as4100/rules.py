@@ -32,6 +32,7 @@ RULES_2020 = Rules(
     k_t="k_t",
     slip_clause="3.5.5",
     bearing=bearing,
+    overstrength=None,
     block=BLOCK,
     not_checked=NOT_CHECKED,
 )

@@ -47,6 +47,8 @@ BENT = Notation(
         Symbol("M_star_y", "M^{*}_{y}", MOMENT, "design moment about y", "M*_y"),
         Symbol("Z_ex", "Z_{ex}", MODULUS, "effective section modulus about x"),
         Symbol("Z_ey", "Z_{ey}", MODULUS, "effective section modulus about y"),
+        Symbol("Z_x", "Z_{x}", MODULUS, "elastic section modulus about x"),
+        Symbol("Z_y", "Z_{y}", MODULUS, "elastic section modulus about y"),
         Symbol("M_sx", "M_{sx}", MOMENT, "nominal section moment capacity about x"),
         Symbol("M_sy", "M_{sy}", MOMENT, "nominal section moment capacity about y"),
         Symbol("b_s", "b_{s}", LENGTH, "clear width of the most slender outstand"),
@@ -54,7 +56,7 @@ BENT = Notation(
         Symbol("lambda_e", r"\lambda_{e}", FACTOR, "slenderness of the outstand", "λ_e"),
         Symbol("lambda_ey", r"\lambda_{ey}", FACTOR, "yield slenderness limit", "λ_ey"),
         Symbol("U_s", "U_{s}", FACTOR, "sum of the ratios of tension and bending"),
-        Symbol("one", "1", FACTOR, "the limit of the sum", "1"),
+        Symbol("U_max", r"U_{\max}", FACTOR, "limit of the sum"),
         Symbol("E", "E", ELASTIC_MODULUS, "Young's modulus"),
         Symbol("N_E", "N_{E}", FORCE, "tension that halves the sag"),
         Symbol("I_sag", "I_{s}", INERTIA, "second moment of area against the sag"),
@@ -103,6 +105,15 @@ def plate_slenderness(b_s: Any, t_o: Any, f_y: Any) -> Any:
 @condition(BENT, title="does the section yield before its outstands buckle", clause="Table 5.2")
 def yields_first(lambda_e: Any, lambda_ey: Any) -> Any:
     return lambda_e <= lambda_ey
+
+
+@formula("Z_ex", BENT, title="effective modulus of a slender section", clause="5.2.5")
+def slender_modulus(Z_ex: Any, lambda_ey: Any, lambda_e: Any) -> Any:
+    """Effective modulus where an outstand buckles before it yields [section modulus]. 5.2.5.
+
+    The square is the reading for an outstand whose free edge is in compression, the lesser one.
+    """
+    return Z_ex * square(lambda_ey / lambda_e)
 
 
 @formula("M_sx", BENT, title="section moment capacity", clause="5.2.1")

@@ -5,11 +5,15 @@ from __future__ import annotations
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass
 
+from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
 
-# Bolt diameter, thickness and tensile strength of the ply; the symbol and title of the line.
-Bearing = Callable[[Working, Entry, Entry, Entry, str, str], Entry]
+# The end's inputs; bolt diameter, thickness and tensile strength of the ply; the symbol and the
+# title of the line.
+Bearing = Callable[[Working, Inputs, Entry, Entry, Entry, str, str], Entry]
+# The member's inputs and its nominal capacity in gross yielding; gives the action, if any.
+Overstrength = Callable[[Working, Inputs, Entry], Entry | None]
 
 
 @dataclass(frozen=True)
@@ -42,7 +46,8 @@ class Rules:
 
     `k_t` is the symbol under which the standard writes the correction factor; `slip_clause` is
     where it gives the capacity factor for slip; `bearing` writes the nominal bearing capacity of
-    a ply at one bolt.
+    a ply at one bolt; `overstrength` writes the action of a brace that yields in an earthquake,
+    None where the standard leaves that to another.
     """
 
     name: str
@@ -50,6 +55,7 @@ class Rules:
     k_t: str
     slip_clause: str
     bearing: Bearing
+    overstrength: Overstrength | None
     block: BlockRule
     not_checked: tuple[str, ...]
 

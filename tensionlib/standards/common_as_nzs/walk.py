@@ -10,6 +10,7 @@ from tensionlib.calculation.working import Working
 from tensionlib.standards.common_as_nzs import bolts, detailing, hole_sizes, tension
 from tensionlib.standards.common_as_nzs.bolts_in_shear import joint_length
 from tensionlib.standards.common_as_nzs.rules import Rules
+from tensionlib.standards.common_as_nzs.walk_bending import bending_checks, service_lines
 from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end
 from tensionlib.standards.common_as_nzs.walk_pattern import (
     force_at_chain,
@@ -60,6 +61,7 @@ def design(
         phiN_ty = work.step(tension.design_gross_yielding, phi, N_ty)
         work.check("gross section yield", force, phiN_ty, "7.1, 7.2")
         _slenderness(work, member)
+        N_os = _overstrength(rules, work, member, N_ty)
 
     lines = _Member(force, A_g, f_u, phi, member, rules)
     capacities = [phiN_ty]
@@ -74,14 +76,16 @@ def design(
             "phiN_t", *capacities, title="design capacity of the member", clause="7.1"
         )
         N_min = work.step(bolts.minimum_action, phiN_t)
+        actions = [force, N_min] if N_os is None else [force, N_min, N_os]
         N_c = work.greatest(
             "N_star_c",
-            force,
-            N_min,
+            *actions,
             title="design action on the connection",
             clause=bolts.MINIMUM_ACTION_CLAUSE,
         )
 
+    bending_checks(rules, work, member, force, phiN_t, f_y)
+    service_lines(work, member)
     for end in ends:
         if end.choice("kind") == "bolted":
             bolted_end(rules, work, end, N_c, f_y, f_u)
@@ -90,6 +94,21 @@ def design(
         else:
             welded_end(rules, work, end, N_c)
     work.leaves_out(*rules.not_checked)
+
+
+def _overstrength(rules: Rules, work: Working, member: Inputs, N_ty: Entry) -> Entry | None:
+    """The action of a brace that yields in an earthquake, where one is stated."""
+    if member.choice("category") == "none":
+        return None
+    if rules.overstrength is None:
+        work.not_covered(
+            "overstrength of the brace",
+            f"{rules.name} leaves earthquake design to the loading standard: give the connection's"
+            " design action as the force",
+            "",
+        )
+        return None
+    return rules.overstrength(work, member, N_ty)
 
 
 def _slenderness(work: Working, member: Inputs) -> None:

@@ -25,15 +25,8 @@ def bending_checks(
     (bent,) = member.parts["bending"]
     with work.part("Tension with bending"):
         moments = {axis: _moment(work, member, bent, force, axis) for axis in _AXES}
-        capacities = {axis: _capacity(work, member, bent, axis, f_y) for axis in _AXES}
-        if bent.has("b_s") and not _yields_first(work, bent, f_y):
-            work.not_covered(
-                "tension with bending",
-                "an outstand of the section buckles before it yields: its effective modulus is not"
-                " offered",
-                "5.2.5",
-            )
-            return
+        slender = _slenderness(work, bent, f_y)
+        capacities = {axis: _capacity(work, bent, axis, f_y, slender) for axis in _AXES}
         phi = work.fixed(
             "phi", rules.factors.member, rules.factors.clause, note="member in bending"
         )
@@ -41,8 +34,8 @@ def bending_checks(
             bending.interaction,
             *(force, phiN_t, moments["x"], phi, capacities["x"], moments["y"], capacities["y"]),
         )
-        one = work.fixed(BENT["one"], 1.0, "8.3.4")
-        work.check("tension with bending", total, one, "8.3.4")
+        limit = work.fixed(BENT["U_max"], 1.0, "8.3.4")
+        work.check("tension with bending", total, limit, "8.3.4")
         work.assume(
             "the member spans on two supports across its load; lateral buckling in bending is not"
             " checked (8.4.4): tension steadies it"
@@ -75,13 +68,21 @@ def _take(work: Working, bent: Inputs, name: str) -> Entry:
     return bent.take(work, name, BENT[name])
 
 
-def _capacity(work: Working, member: Inputs, bent: Inputs, axis: str, f_y: Entry) -> Entry:
-    _, capacity, modulus, _ = _AXES[axis]
-    Z = _take(work, bent, modulus)
+def _capacity(
+    work: Working, bent: Inputs, axis: str, f_y: Entry, slender: tuple[Entry, Entry] | None
+) -> Entry:
+    _, capacity, effective, _ = _AXES[axis]
+    elastic = f"Z_{axis}"
+    Z = bent.take(work, effective, BENT[elastic] if slender else BENT[effective])
+    if slender:
+        Z = work.step(bending.slender_modulus, Z, *slender, gives=BENT[effective])
     return work.step(bending.section_moment, f_y, Z, gives=BENT[capacity])
 
 
-def _yields_first(work: Working, bent: Inputs, f_y: Entry) -> bool:
+def _slenderness(work: Working, bent: Inputs, f_y: Entry) -> tuple[Entry, Entry] | None:
+    """Limit and slenderness of an outstand that buckles before it yields; None for none."""
+    if not bent.has("b_s"):
+        return None
     slenderness = work.step(
         bending.plate_slenderness, _take(work, bent, "b_s"), _take(work, bent, "t_o"), f_y
     )
@@ -92,7 +93,10 @@ def _yields_first(work: Working, bent: Inputs, f_y: Entry) -> bool:
         note="flat plate, one edge free, hot-rolled",
         source="Table 5.2, from memory, sure",
     )
-    return work.holds(bending.yields_first, slenderness, limit, yes="elastic modulus holds")
+    yes, no = "the elastic modulus holds", "the modulus is reduced"
+    if work.holds(bending.yields_first, slenderness, limit, yes=yes, no=no):
+        return None
+    return limit, slenderness
 
 
 # In service -------------------------------------------------------------------------------

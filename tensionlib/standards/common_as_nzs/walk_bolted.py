@@ -73,7 +73,7 @@ def _member_plies(rules: Rules, work: Working, end: Inputs, N_c: Entry, f_u: Ent
     d_f, t = end.take(work, "d_f"), end.take(work, "t")
     a_e = _least_clear(work, end, "e_1", ("a_e1", "a_e2", "a_e"))
     title = "bearing of the ply at a bolt"
-    bearing = rules.bearing(work, d_f, t, f_u, "V_bb", title)
+    bearing = rules.bearing(work, end, d_f, t, f_u, "V_bb", title)
     tear_out = work.step(bolts.ply_tear_out, a_e, t, f_u)
     V_b = work.least("V_b", bearing, tear_out, title="capacity of the ply at a bolt")
     count = [end.take(work, name) for name in ("n_e", "n_l", "n_p")]
@@ -87,7 +87,7 @@ def _gusset_plies(
     phi = work.fixed("phi", rules.factors.ply, rules.factors.clause, note="ply in bearing")
     a_p = _least_clear(work, end, "e_p", ("a_p1", "a_p2", "a_p"))
     d_f, title = end.take(work, "d_f"), "bearing of the gusset at a bolt"
-    bearing = rules.bearing(work, d_f, t_p, f_up, "V_pb", title)
+    bearing = rules.bearing(work, end, d_f, t_p, f_up, "V_pb", title)
     tear_out = work.step(
         bolts.ply_tear_out, a_p, t_p, f_up, gives="V_pt", title="tear-out of the gusset at a bolt"
     )

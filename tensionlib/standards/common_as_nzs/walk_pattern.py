@@ -112,7 +112,7 @@ def pattern_end(
             _blocks(rules, work, end, grip, N_c, f_y, f_u)
     for grip in grips:
         plates = grip.parts["plate"][0]
-        with work.part(label + "Gusset" + grip.choice("where")):
+        with work.part(label + end.choice("plate") + grip.choice("where")):
             t_p = end.take(work, "t_p")
             f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
             N_m = _element_force(work, end, grip, N_c)
@@ -158,6 +158,7 @@ def _plies(
     d_f, n_e, t = end.take(work, "d_f"), ply.take(work, "n_e"), _thickness(work, end, ply)
     bearing = rules.bearing(
         work,
+        end,
         d_f,
         t,
         f_u,

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from tensionlib.calculation.symbols import Notation, Source, Symbol
-from tensionlib.quantities import FACTOR
+from tensionlib.quantities import FACTOR, FORCE
 from tensionlib.standards.common_as_nzs.symbols import SYMBOLS
 
 SOURCE = Source(
@@ -18,5 +18,7 @@ NZS = Notation(
         *SYMBOLS,
         Symbol("k_te", "k_{te}", FACTOR, "correction factor for the distribution of forces"),
         Symbol("C_1", "C_{1}", FACTOR, "ply bearing factor"),
+        Symbol("phi_oms", r"\phi_{oms}", FACTOR, "overstrength factor of the member", "φ_oms"),
+        Symbol("N_os", "N_{os}", FORCE, "overstrength of the brace"),
     ],
 )

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from tensionlib.standards.common_as_nzs.rules import NOT_CHECKED, BlockRule, Factors, Rules
 from tensionlib.standards.nzs3404.bearing import bearing
+from tensionlib.standards.nzs3404.overstrength import overstrength
 
 # Table 3.3(1), read in a printed page of the table; slip from Table 3.3(2).
 FACTORS = Factors(
@@ -31,6 +32,7 @@ RULES = Rules(
     k_t="k_te",
     slip_clause="Table 3.3(2)",
     bearing=bearing,
+    overstrength=overstrength,
     block=BLOCK,
     not_checked=NOT_CHECKED,
 )

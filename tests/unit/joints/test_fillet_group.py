@@ -145,6 +145,13 @@ def test_a_short_transverse_run_beside_the_heel():
     assert found == pytest.approx((250.0, 110.0), rel=1e-12)
 
 
+def test_a_transverse_run_as_wide_as_the_leg_is_not_refused_for_rounding():
+    """The levers add up to a hair less than the 100 mm of the run."""
+    lever = 50.0 - 1e-13
+    assert 2 * lever < 100.0
+    assert balanced_runs(lever, lever, 400.0, 100.0) == pytest.approx((150.0, 150.0))
+
+
 def test_a_transverse_run_that_just_leaves_the_toe_without_weld():
     """Moments about the heel: 100·50 = 30 L, L = 166.667 mm is the least total."""
     low, high = balanced_runs(30.0, 70.0, 500 / 3, 100.0)
