@@ -32,6 +32,9 @@ if TYPE_CHECKING:
     from tensionlib.joints.pattern_end import BoltedPattern as BoltedPattern
     from tensionlib.joints.pattern_end import Covers as Covers
     from tensionlib.joints.pattern_end import as_pattern as as_pattern
+    from tensionlib.joints.welded_runs import FilletRun as FilletRun
+    from tensionlib.joints.welded_runs import WeldedRuns as WeldedRuns
+    from tensionlib.joints.welded_runs import balanced_lengths as balanced_lengths
     from tensionlib.members.beside import Across as Across
     from tensionlib.members.beside import Overstrength as Overstrength
     from tensionlib.members.design import design as design
@@ -58,6 +61,7 @@ _WHERE = {
     "Check": "calculation.result",
     "Constant": "calculation.formula",
     "Covers": "joints.pattern_end",
+    "FilletRun": "joints.welded_runs",
     "Gusset": "joints.ends",
     "Hole": "joints.holes",
     "METRIC": "quantities",
@@ -69,8 +73,10 @@ _WHERE = {
     "Symbol": "calculation.symbols",
     "US": "quantities",
     "Welded": "joints.ends",
+    "WeldedRuns": "joints.welded_runs",
     "Working": "calculation.working",
     "as_pattern": "joints.pattern_end",
+    "balanced_lengths": "joints.welded_runs",
     "bolt": "steel",
     "by_dimensions": "steel",
     "check_file": "package.project",

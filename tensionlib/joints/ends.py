@@ -254,6 +254,9 @@ class Welded(Stated):
         Weld metal, for example "E48XX".
     slot_clearance : length, optional
         Width of the slots in a tube over the gusset's thickness; due for "slot".
+    shear_lag_by_length : bool
+        For a slotted tube, whose case the tables of AS 4100 and NZS 3404 do not have: take the
+        correction factor as 1 - x/l of AISC 360-16 Table D3.1, cases 5 and 6; printed as such.
     k_te : number, optional
         Correction factor stated by the engineer where the standard's table has no row for the
         case (a slotted tube); printed with `k_te_reason`.
@@ -268,6 +271,7 @@ class Welded(Stated):
     quality: str = "SP"
     metal: str = "E48XX"
     slot_clearance: Length | None = None
+    shear_lag_by_length: bool = False
     k_te: float | None = None
     k_te_reason: str = ""
     kind: ClassVar[str] = "welded"
@@ -294,6 +298,14 @@ class Welded(Stated):
                 "slot_clearance: missing; a slotted tube needs it, for example '3 mm'"
                 if self.to == "slot"
                 else f"slot_clearance: given for an end welded to {self.to!r}; it needs to='slot'"
+            )
+        if not isinstance(self.shear_lag_by_length, bool):
+            raise InputError(
+                f"shear_lag_by_length: got {self.shear_lag_by_length!r}; True or False is due"
+            )
+        if self.shear_lag_by_length and (self.to != "slot" or self.k_te is not None):
+            raise InputError(
+                "shear_lag_by_length: it is for an end welded to 'slot' without a stated k_te"
             )
         if self.transverse is not None and self.to in ("slot", "bar", "both flanges"):
             raise InputError(

@@ -8,7 +8,8 @@ from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, Welded, in_mm
+from tensionlib.joints.ends import Bolted, in_mm
+from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
@@ -154,7 +155,7 @@ def _fitting_holes(member: Member, chosen: Standard) -> tuple[float, ...]:
     holes = []
     for end in member.ends:
         hole = 0.0
-        if not isinstance(end, Welded):
+        if isinstance(end, Bolted | BoltedPattern):
             d_f = bolt(end.bolts).d_f
             hole, _ = chosen.hole_size(d_f, "standard")
         if isinstance(end, Bolted):
@@ -172,7 +173,7 @@ def _materials(member: Member) -> list[tuple[Source, str]]:
     for end in member.ends:
         plate = grade(end.plate.steel)
         found.append((Source(plate.standard, plate.standard, plate.known), f"gusset: {plate.name}"))
-        if not isinstance(end, Welded):
+        if isinstance(end, Bolted | BoltedPattern):
             fastener = bolt(end.bolts)
             found.append(
                 (Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}")

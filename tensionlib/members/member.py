@@ -8,11 +8,12 @@ from typing import Any
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.beside import Across, Overstrength
 from tensionlib.quantities import LENGTH, Quantity, door
 from tensionlib.steel import Grade, Section, grade, section
 
-End = Bolted | BoltedPattern | Welded
+End = Bolted | BoltedPattern | Welded | WeldedRuns
 
 
 @dataclass(frozen=True)
@@ -28,7 +29,7 @@ class Member:
     steel : str or Grade
         Grade of the section: "AS/NZS 3679.1 300".
     length : length
-    end : Bolted, BoltedPattern or Welded
+    end : Bolted, BoltedPattern, Welded or WeldedRuns
         The end connection, at both ends unless `far_end` differs.
     far_end : the same, optional
     title : str

@@ -28,12 +28,11 @@ from tensionlib.joints.opened import Opened, OpenedSheet, element_part, opened
 from tensionlib.joints.parts import Flat, Opening, check_holes
 from tensionlib.joints.paths import Hop, NetPath, least_path
 from tensionlib.joints.pattern_end import BoltedPattern, Covers
+from tensionlib.joints.welded_runs import member_line
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import Member
 from tensionlib.standards import Standard
 from tensionlib.steel import Bolt, Section, bolt, grade
-from tensionlib.steel.outline import Properties
-from tensionlib.steel.shapes import outline
 
 _TAN_30 = math.tan(math.pi / 6)
 _FOUND = "found by the search"
@@ -246,28 +245,7 @@ class PatternGeometry:
             raise InputError(
                 "share: 'elastic' is offered for bolts through one element; give share='equal'"
             )
-        return elastic_shares(self.bolts, self.member_line)
-
-    @cached_property
-    def member_line(self) -> float:
-        """Where the member's centroid lies across the element on the gusset, mm."""
-        section, element = self.section, self.grips[0].element
-        at: float | None
-        shape = section.shape.removeprefix("double ")
-        if shape == "angle":
-            # A pair's own centroid lies in the gap; each component's counts across the leg.
-            one = Properties.of(outline("angle", section.dims).moments())
-            at = one.x_c if element in ("short leg", "other leg") else one.y_c
-        elif shape == "tee" and element == "web":
-            at = section.y_c
-        else:
-            name = element.removesuffix(" 1").removesuffix(" 2")
-            at = section.x_c if (shape, name) == ("channel", "flange") else section.leg(name) / 2
-        if at is None:
-            raise InputError(
-                f"share: 'elastic' needs the centroid of {section.designation}, which states none"
-            )
-        return at
+        return elastic_shares(self.bolts, member_line(self.section, self.grips[0].element))
 
     @property
     def joint_length(self) -> float:

@@ -2,18 +2,21 @@
 
 from __future__ import annotations
 
+import math
 from functools import cache
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
 from tensionlib.joints.ends import Bolted, Gusset, Welded, in_mm
+from tensionlib.joints.fillet_group import elastic_stress, properties
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.welded_runs import WeldedRuns, member_line
 from tensionlib.members.beside import Across
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
 from tensionlib.standards import Standard
-from tensionlib.steel import Grade, bolt, grade, weld_metal
+from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
 from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
 
 _STATED = "given"
@@ -143,6 +146,11 @@ def end_inputs(
     parts: dict[str, tuple[Inputs, ...]] = {}
     if isinstance(end, Welded):
         more, also = _welded(end)
+        if end.to == "slot":
+            more |= _slotted(section)
+            also["shear_lag"] = "by length" if end.shear_lag_by_length else "none"
+    elif isinstance(end, WeldedRuns):
+        more, also = _welded_runs(section, end)
     else:
         served = {} if service is None else {"N_star_ser": service}
         parts["service"] = (Inputs({}, served, {}, prefix + "service "),) if served else ()
@@ -251,3 +259,45 @@ def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
         numbers["n_s"] = Number(2.0, _COUNTED)
         numbers["c_s"] = Number(in_mm(end.slot_clearance), _STATED)
     return numbers, {"quality": end.quality}
+
+
+def _slotted(section: Section) -> dict[str, Number]:
+    """What a slotted tube's shear lag goes by: its height along the gusset, its centroid off it."""
+    d = section.dims
+    if section.shape == "CHS":
+        height, off = d["d"], d["d"] / math.pi
+        origin = "outside diameter over π"
+    else:
+        height, width = d["d"], d["b"]
+        off = (width * width + 2 * width * height) / (4 * (width + height))
+        origin = "(B² + 2BH) / (4(B + H)) of the tube"
+    return {"h_s": Number(height, section.source), "x_bar": Number(off, origin)}
+
+
+def _welded_runs(section: Section, end: WeldedRuns) -> tuple[dict[str, Number], dict[str, str]]:
+    metal = weld_metal(end.metal)
+    runs = [run.as_run() for run in end.runs]
+    group = properties(runs)
+    line = member_line(section, end.to)
+    peak = elastic_stress(group, line)
+    ys = [y for run in runs for y in (run.y_1, run.y_2)]
+    # The force spreads along runs that lie along it; a group without such runs spreads nothing.
+    along = [run.length for run in runs if run.angle < math.pi / 4]
+    legs = [run.leg for run in runs]
+    found = "from the runs"
+    numbers = {
+        "f_uw": Number(metal.f_uw, metal.source),
+        "A_wn": Number(group.area, found),
+        "I_wn": Number(group.I_p, found),
+        "e_w": Number(group.y_c - line, "member's centroid and the weld's centroid"),
+        "x_w": Number(peak.x, f"end of run {peak.mark}"),
+        "y_w": Number(peak.y, f"end of run {peak.mark}"),
+        "t_w": Number(min(legs), "smallest leg of the runs"),
+        "l_min": Number(min(along, default=0.0), found),
+        "l_max": Number(max(run.length for run in runs), found),
+        "l_r": Number(min(run.length for run in runs), found),
+        "b_r": Number(max(ys) - min(ys), found),
+    }
+    if max(legs) > min(legs):
+        numbers["t_w2"] = Number(max(legs), "largest leg of the runs")
+    return numbers, {"quality": end.quality, "worst": peak.mark}

@@ -7,6 +7,7 @@ from tensionlib.joints.ends import Bolted, Welded, in_mm
 from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.sketch import EndView, describe, sketch_end
 from tensionlib.joints.svg import to_svg
+from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.geometry import Seat, seat
 from tensionlib.members.member import End, Member
 from tensionlib.steel import Section, bolt
@@ -36,6 +37,8 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
         return _bolted(section, end, place, force, hole)
     if isinstance(end, BoltedPattern):
         return _pattern(section, end, place, force, hole)
+    if isinstance(end, WeldedRuns):
+        return _runs(section, end, place, force)
     return _welded(section, end, place, force)
 
 
@@ -155,5 +158,33 @@ def _welded(section: Section, end: Welded, place: Seat, force: str) -> EndView:
         welds=tuple(welds),
         leg_size=in_mm(end.leg_size),
         along=along,
+        across=(0.0, b),
+    )
+
+
+def _runs(section: Section, end: WeldedRuns, place: Seat, force: str) -> EndView:
+    runs = [run.as_run() for run in end.runs]
+    b = place.width
+    far = max(max(run.x_1, run.x_2) for run in runs)
+    legs = sorted({run.leg for run in runs})
+    return EndView(
+        section=section,
+        to=end.to,
+        element=place.element,
+        width=b,
+        thickness=place.thickness,
+        plate_thickness=in_mm(end.plate.thickness),
+        plate_end=far + 10.0,
+        plate_width=_plate_width(end, b, far, b),
+        force=force,
+        notes=(
+            section.designation.partition(",")[0],
+            f"gusset {in_mm(end.plate.thickness):g} mm",
+            " and ".join(f"{leg:g}" for leg in legs) + " mm fillets",
+            f"{end.quality}, {end.metal}",
+        ),
+        welds=tuple((run.x_1, run.y_1, run.x_2, run.y_2) for run in runs),
+        leg_size=legs[0],
+        along=tuple((0.0, run.length) for run in runs if run.angle < 0.1),
         across=(0.0, b),
     )

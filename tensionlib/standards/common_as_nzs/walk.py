@@ -17,7 +17,11 @@ from tensionlib.standards.common_as_nzs.walk_pattern import (
     pattern_deduction,
     pattern_end,
 )
-from tensionlib.standards.common_as_nzs.walk_welded import shorter_run, welded_end
+from tensionlib.standards.common_as_nzs.walk_welded import (
+    shear_lag_of_slot,
+    shorter_run,
+    welded_end,
+)
 
 
 @dataclass(frozen=True)
@@ -151,7 +155,7 @@ def _deduction(work: Working, end: Inputs) -> Entry | None:
             tension.deduction_slots,
             *(end.take(work, name) for name in ("n_s", "t", "t_p", "c_s")),
         )
-    if end.choice("kind") == "welded":
+    if end.choice("kind") in ("welded", "welded runs"):
         return None
     if end.choice("kind") == "bolted pattern":
         return pattern_deduction(work, end)
@@ -207,6 +211,8 @@ def _factor(work: Working, member: _Member, end: Inputs) -> Entry | None:
     symbol = member.rules.k_t
     if end.has("k_t"):
         return end.take(work, "k_t", symbol)
+    if end.choice("to") == "slot" and end.choice("shear_lag") == "by length":
+        return shear_lag_of_slot(work, end, symbol)
     key = connection_case(end)
     why = (
         f"Table 7.3.2 has no row for this section ({end.choice('shape')}) connected by its"

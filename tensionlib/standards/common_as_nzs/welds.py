@@ -8,9 +8,11 @@ from __future__ import annotations
 
 from typing import Any
 
-from tensionlib.calculation.dispatch import sqrt
+from tensionlib.calculation.dispatch import sqrt, square
 from tensionlib.calculation.formula import Constant, condition, formula
-from tensionlib.standards.common_as_nzs.symbols import COMMON
+from tensionlib.calculation.symbols import Notation, Symbol
+from tensionlib.quantities import AREA, INERTIA, LENGTH, STRESS
+from tensionlib.standards.common_as_nzs.symbols import COMMON, SYMBOLS
 
 L_1 = Constant("1 m")
 L_1700 = Constant("1.7 m")
@@ -72,6 +74,83 @@ def fillet(f_uw: Any, t_t: Any, k_r: Any) -> Any:
 def design_fillet(phi: Any, v_w: Any, l_w: Any) -> Any:
     """Design capacity of the whole weld, every run at the same strength [force]. 9.7.3.10."""
     return phi * v_w * l_w
+
+
+# Eccentric groups of fillets, by elastic vectors -----------------------------------------
+
+STATICS = "statics"
+WELDS = Notation(
+    COMMON.source,
+    [
+        *SYMBOLS,
+        Symbol("A_w", "A_{w}", AREA, "area of all throats, all plies"),
+        Symbol("I_w", "I_{w}", INERTIA, "polar second moment of the throats"),
+        Symbol("e_w", "e_{w}", LENGTH, "member's line off the weld's centroid"),
+        Symbol("x_w", "x_{w}", LENGTH, "most stressed point from the centroid, along the force"),
+        Symbol("y_w", "y_{w}", LENGTH, "most stressed point from the centroid, across the force"),
+        Symbol("tau_x", r"\tau_{x}", STRESS, "stress on the throat along the member", "τ_x"),
+        Symbol("tau_y", r"\tau_{y}", STRESS, "stress on the throat across the member", "τ_y"),
+        Symbol("tau_star", r"\tau^{*}", STRESS, "design stress on the throat", "τ*"),
+        Symbol("phi_tau", r"\phi \tau_{w}", STRESS, "design strength of the throat", "φτ_w"),
+        Symbol("A_wn", "A_{wn}", AREA, "area of all throats of one ply"),
+        Symbol("I_wn", "I_{wn}", INERTIA, "polar second moment of one ply's throats"),
+        Symbol("x_bar", r"\bar{x}", LENGTH, "centroid of half the tube off the gusset", "x̄"),
+        Symbol("h_s", "h_{s}", LENGTH, "height of the tube along the gusset's face"),
+    ],
+)
+
+
+@formula("A_w", WELDS, title="area of all throats", known=STATICS)
+def throats_of_plies(n_e: Any, A_wn: Any) -> Any:
+    """Throat area over all plies [area]. Statics."""
+    return n_e * A_wn
+
+
+@formula("I_w", WELDS, title="polar second moment of all throats", known=STATICS)
+def inertia_of_plies(n_e: Any, I_wn: Any) -> Any:
+    """Polar second moment of the throats over all plies [inertia]. Statics."""
+    return n_e * I_wn
+
+
+@formula("tau_x", WELDS, title="along the member, direct force and moment", known=STATICS)
+def throat_stress_along(N_star_c: Any, A_w: Any, e_w: Any, y_w: Any, I_w: Any) -> Any:
+    """Throat stress along the member by elastic vectors [stress]. Statics."""
+    return N_star_c / A_w - N_star_c * e_w * y_w / I_w
+
+
+@formula("tau_y", WELDS, title="across the member, from the moment", known=STATICS)
+def throat_stress_across(N_star_c: Any, e_w: Any, x_w: Any, I_w: Any) -> Any:
+    """Throat stress across the member by elastic vectors [stress]. Statics."""
+    return N_star_c * e_w * x_w / I_w
+
+
+@formula("tau_star", WELDS, title="resultant on the throat", known=STATICS)
+def throat_stress(tau_x: Any, tau_y: Any) -> Any:
+    """Resultant stress on the throat [stress]. Statics."""
+    return sqrt(square(tau_x) + square(tau_y))
+
+
+@condition(WELDS, title="are the welds as long as the tube is high", clause="practice")
+def as_long_as_tube(l_min: Any, h_s: Any) -> Any:
+    return l_min >= h_s
+
+
+@formula(
+    "k_t",
+    WELDS,
+    title="correction factor by length",
+    clause="practice",
+    known="AISC 360-16 Table D3.1, cases 5 and 6, from memory",
+)
+def shear_lag(x_bar: Any, l_min: Any) -> Any:
+    """Shear lag of a slotted tube by the length of its welds [factor]. AISC 360-16 Table D3.1."""
+    return 1 - x_bar / l_min
+
+
+@formula("phi_tau", WELDS, title="design strength of the throat", clause="9.7.3.10")
+def throat_strength(phi: Any, f_uw: Any, k_r: Any) -> Any:
+    """Design strength of a fillet weld on its throat [stress]. 9.7.3.10."""
+    return phi * 0.6 * f_uw * k_r
 
 
 @formula("l_4", COMMON, title="four leg sizes", clause="9.7.3.5")
