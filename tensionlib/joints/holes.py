@@ -11,7 +11,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass, replace
 
 from tensionlib.errors import InputError, did_you_mean
-from tensionlib.joints.ends import Length, choice, in_mm
+from tensionlib.joints.stated import Length, choice, in_mm
 from tensionlib.quantities import LENGTH, count, door, quantity
 
 KINDS = ("standard", "oversize", "short slot", "long slot")

@@ -6,18 +6,9 @@ from dataclasses import dataclass
 from typing import ClassVar
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import (
-    BOLTED_TO,
-    EDGES,
-    THREADS,
-    Bolted,
-    Gusset,
-    Length,
-    Stated,
-    choice,
-    in_mm,
-)
+from tensionlib.joints.ends import BOLTED_TO, Bolted, Gusset
 from tensionlib.joints.holes import Pattern
+from tensionlib.joints.stated import EDGES, THREADS, Length, Stated, choice, in_mm
 from tensionlib.quantities import LENGTH, count, quantity
 from tensionlib.steel import Section, bolt
 

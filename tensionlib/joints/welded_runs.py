@@ -6,8 +6,9 @@ from dataclasses import dataclass
 from typing import ClassVar
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import BOLTED_TO, QUALITIES, Gusset, Length, Stated, choice, in_mm
+from tensionlib.joints.ends import BOLTED_TO, Gusset
 from tensionlib.joints.fillet_group import Run, balanced_runs
+from tensionlib.joints.stated import QUALITIES, Length, Stated, choice, in_mm
 from tensionlib.quantities import LENGTH, Quantity, door, quantity
 from tensionlib.steel import Section
 from tensionlib.steel.outline import Properties

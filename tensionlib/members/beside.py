@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Length, Stated, choice
+from tensionlib.joints.stated import Length, Stated, choice
 from tensionlib.quantities import WEIGHT_PER_LENGTH, Quantity, door, factor
 
 Load = Quantity | str

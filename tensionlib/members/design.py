@@ -8,8 +8,9 @@ from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, in_mm
+from tensionlib.joints.ends import Bolted
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.stated import in_mm
 from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member

@@ -5,8 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted, in_mm
+from tensionlib.joints.ends import Bolted
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.stated import in_mm
 from tensionlib.members.member import End
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section

@@ -22,12 +22,12 @@ from tensionlib.joints.bolt_group import (
     most_loaded,
     worst_tear_out,
 )
-from tensionlib.joints.ends import in_mm
 from tensionlib.joints.holes import Hole
 from tensionlib.joints.opened import Opened, OpenedSheet, element_part, opened
 from tensionlib.joints.parts import Flat, Opening, check_holes
 from tensionlib.joints.paths import Hop, NetPath, least_path
 from tensionlib.joints.pattern_end import BoltedPattern, Covers
+from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import member_line
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import Member

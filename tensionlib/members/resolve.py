@@ -7,14 +7,17 @@ from functools import cache
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
-from tensionlib.joints.ends import Bolted, Gusset, Welded, in_mm
+from tensionlib.joints.ends import Bolted, Gusset, Welded
 from tensionlib.joints.fillet_group import elastic_stress, properties
+from tensionlib.joints.hanger import Hanger
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns, member_line
 from tensionlib.members.beside import Across
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
+from tensionlib.quantities import ANGLE, door
 from tensionlib.standards import Standard
 from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
 from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
@@ -140,10 +143,10 @@ def end_inputs(
     }
     if seismic is not None and seismic.bearing_factor is not None:
         common["C_1"] = Number(seismic.bearing_factor, _STATED)
+    parts: dict[str, tuple[Inputs, ...]] = {"hanger": _hanger(end.plate.hanger, prefix)}
     plate_steel = grade(end.plate.steel, "plate.steel")
     plate_steel.suits("plate", "plate.steel")
     tables = _tables(plate_steel, "f_yp", "f_up", "the gusset")
-    parts: dict[str, tuple[Inputs, ...]] = {}
     if isinstance(end, Welded):
         more, also = _welded(end)
         if end.to == "slot":
@@ -259,6 +262,33 @@ def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
         numbers["n_s"] = Number(2.0, _COUNTED)
         numbers["c_s"] = Number(in_mm(end.slot_clearance), _STATED)
     return numbers, {"quality": end.quality}
+
+
+def _hanger(hanger: Hanger | None, prefix: str) -> tuple[Inputs, ...]:
+    """The bolts in tension that the gusset hangs by."""
+    if hanger is None:
+        return ()
+    fastener = bolt(hanger.bolts)
+    one = Number(1.0, _COUNTED)
+    angle = float(door("angle", hanger.angle, ANGLE).internal)
+    numbers = {
+        "n_t": Number(float(hanger.number), _STATED),
+        "q": Number(hanger.prying, "allowance as stated; common practice, no source"),
+        "theta": Number(angle, _STATED),
+        "A_s": Number(fastener.A_s, fastener.source),
+        "A_c": Number(fastener.A_c, fastener.source),
+        "A_o": Number(fastener.A_o, fastener.source),
+        "f_uf": Number(fastener.f_uf, fastener.source),
+        "n_n": one,
+        "n_x": one,
+        "s_t": Number(in_mm(hanger.gauge), _STATED),
+        "p_t": Number(in_mm(hanger.tributary), _STATED),
+        "t_f1": Number(in_mm(hanger.thickness), _STATED),
+    }
+    steel = grade(hanger.steel, "hanger.steel")
+    table = _table(steel, "f_y", "the hanger's flange"), steel.name
+    choices = {"threads": hanger.threads, "inclined": "yes" if angle > 0.0 else "no"}
+    return (Inputs(choices, numbers, {"f_y": table}, prefix + "hanger: "),)
 
 
 def _slotted(section: Section) -> dict[str, Number]:

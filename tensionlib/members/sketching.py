@@ -3,9 +3,10 @@
 from __future__ import annotations
 
 from tensionlib.calculation.result import Sketch
-from tensionlib.joints.ends import Bolted, Welded, in_mm
+from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.sketch import EndView, describe, sketch_end
+from tensionlib.joints.stated import in_mm
 from tensionlib.joints.svg import to_svg
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.geometry import Seat, seat

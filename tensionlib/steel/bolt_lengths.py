@@ -1,8 +1,8 @@
 """Bolts as bought: the length to order, and whether the thread reaches a shear plane.
 
 Lengths are floats in mm. Every table of dimensions here is from memory of the product standard
-named beside it; what was not remembered with certainty is said in `Hardware.unsure`, and every length
-picked carries the remark.
+named beside it; what was not remembered with certainty is said in `Hardware.unsure`, and every
+length picked carries the remark.
 
 A bolt and its nut are not yet chosen by maker when a joint is designed, so each check takes the
 value of the listed products that is worse for it: the highest nut and the thickest washer for
@@ -17,7 +17,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
-from tensionlib.quantities.door import count
+from tensionlib.quantities import count
 from tensionlib.steel.bolts import SIZES
 
 # Bolts of ISO 4014 and AS 1110.1 come in the lengths of ISO 888, from memory; 75 mm is not one of
@@ -38,7 +38,7 @@ TRANSITION_PITCHES = 5.0
 CLEAR_PITCHES = 1.0
 _MOST_WASHERS = 2  # under the head, and under the nut; common practice, no source
 _MOST_EXTRA = 100  # mm; how much thicker a ply is tried for a way out
-_NO_WAY = "take threads in the shear plane"
+_FALL_BACK = "take threads in the shear plane"
 _HAIR = 1e-9  # mm; sums of thicknesses that meet a limit to the last bit are on it
 
 
@@ -351,7 +351,7 @@ def buildable(
     ]
     lead = f"{shank}, and meets threads in the shear plane at {' and at '.join(met)}"
     ways = _ways_out(size, plies, washers_head, washers_nut, head_on_first)
-    return Verdict(False, f"{lead}: " + (" or ".join(ways) if ways else _NO_WAY))
+    return Verdict(False, f"{lead}: " + (" or ".join(ways) if ways else _FALL_BACK))
 
 
 def _ways_out(
@@ -382,7 +382,7 @@ def _ways_out(
                 f" ({bolt.designation})"
             )
             break
-    return [*ways, _NO_WAY] if ways else ways
+    return [*ways, _FALL_BACK] if ways else ways
 
 
 def _washers(argument: str, value: int) -> int:

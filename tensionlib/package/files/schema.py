@@ -32,7 +32,8 @@ from pydantic.json_schema import GenerateJsonSchema, JsonSchemaValue
 from pydantic_core import CoreSchema, core_schema
 
 from tensionlib.errors import InputError, UnitError, did_you_mean
-from tensionlib.joints.ends import BOLTED_TO, EDGES, QUALITIES, THREADS, WELDED_TO
+from tensionlib.joints.ends import BOLTED_TO, WELDED_TO
+from tensionlib.joints.stated import EDGES, QUALITIES, THREADS
 from tensionlib.package.files.fields import (
     FORCE_EXAMPLE,
     LENGTH_EXAMPLE,

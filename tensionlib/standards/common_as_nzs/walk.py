@@ -12,6 +12,7 @@ from tensionlib.standards.common_as_nzs.bolts_in_shear import joint_length
 from tensionlib.standards.common_as_nzs.rules import Rules
 from tensionlib.standards.common_as_nzs.walk_bending import bending_checks, service_lines
 from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end
+from tensionlib.standards.common_as_nzs.walk_hanger import hanger_checks
 from tensionlib.standards.common_as_nzs.walk_pattern import (
     force_at_chain,
     pattern_deduction,
@@ -97,6 +98,7 @@ def design(
             pattern_end(rules, work, end, N_c, f_y, f_u)
         else:
             welded_end(rules, work, end, N_c)
+        hanger_checks(rules, work, end, N_c)
     work.leaves_out(*rules.not_checked)
 
 

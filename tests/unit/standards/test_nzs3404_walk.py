@@ -105,7 +105,8 @@ def test_staggered_lines_in_one_leg(stagger, step):
     assert found["Bolts", "bolt shear"] == pytest.approx(0.8 * 6 * 0.62 * 830 * 225)
     L_j = 140 + float(stagger.split()[0])
     assert calc.value("L_j").internal == pytest.approx(L_j)
-    b_d = 60 + SPREAD * L_j
+    # The line in front spreads over its own 140 mm, the one that stands back over all of L_j.
+    b_d = 60 + SPREAD / 2 * (140 + L_j)
     assert found["Gusset", "yield"] == pytest.approx(0.9 * b_d * 12 * 260)
     apart = calc["least distance between lines"]
     assert apart.capacity.internal == pytest.approx(sqrt(step**2 + 60**2))
