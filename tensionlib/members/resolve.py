@@ -14,6 +14,7 @@ from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns, member_line
 from tensionlib.members.beside import Across
+from tensionlib.members.fastening import bought, room_inputs
 from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
@@ -156,6 +157,8 @@ def end_inputs(
         more, also = _welded_runs(section, end)
     else:
         served = {} if service is None else {"N_star_ser": service}
+        parts["bought"] = bought(end, place, prefix)
+        parts["room"] = room_inputs(section, end, place, prefix)
         parts["service"] = (Inputs({}, served, {}, prefix + "service "),) if served else ()
         if isinstance(end, Bolted):
             more, also = _bolted(end, place)

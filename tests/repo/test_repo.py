@@ -185,7 +185,7 @@ def walk(work, member, ends, force):
         work.check("yield", force, work.step(yielding, A_g, f_y), "1")
 
 
-STANDARD = Standard("toyrules", NOTATION, walk, lambda d_f: 1.0)
+STANDARD = Standard("toyrules", NOTATION, walk, lambda d_f, kind: (d_f + 1.0, d_f + 1.0))
 '''
 
 

@@ -12,6 +12,7 @@ from tensionlib.standards.common_as_nzs.bolts_in_shear import joint_length
 from tensionlib.standards.common_as_nzs.rules import Rules
 from tensionlib.standards.common_as_nzs.walk_bending import bending_checks, service_lines
 from tensionlib.standards.common_as_nzs.walk_bolted import bolted_end
+from tensionlib.standards.common_as_nzs.walk_fastening import fastening
 from tensionlib.standards.common_as_nzs.walk_hanger import hanger_checks
 from tensionlib.standards.common_as_nzs.walk_pattern import (
     force_at_chain,
@@ -99,6 +100,8 @@ def design(
         else:
             welded_end(rules, work, end, N_c)
         hanger_checks(rules, work, end, N_c)
+        if end.choice("kind") in ("bolted", "bolted pattern"):
+            fastening(work, end)
     work.leaves_out(*rules.not_checked)
 
 
