@@ -69,7 +69,11 @@ NAMES = [
         DataNotFoundError,
         "'S275' is not a grade on offer; there are AS/NZ",
     ),
-    (lambda: member(end="bolted"), InputError, r"end: got 'bolted'; an end is due, for example Bolted\(...\)"),
+    (
+        lambda: member(end="bolted"),
+        InputError,
+        r"end: got 'bolted'; an end is due, for example Bolted\(...\)",
+    ),
     (lambda: member(far_end="welded"), InputError, "far_end: got 'welded'"),
     (lambda: member().but(lenght="3 m"), InputError, "Did you mean 'length'"),
     (lambda: bolted().but(pich="60 mm"), InputError, "'pich' is not a field; .* 'pitch'"),
