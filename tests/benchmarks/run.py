@@ -214,6 +214,60 @@ def arrays(repeat: int) -> list[Row]:
     ]
 
 
+def _holes(count: int):
+    """A pattern of `count` holes in six staggered lines, none with a bolt missing."""
+    from tensionlib.joints.parts import Opening
+
+    return [
+        Opening.round(str(i), 40.0 + 70.0 * (i // 6) + 35.0 * (i % 2), 40.0 + 60.0 * (i % 6), 22.0)
+        for i in range(count)
+    ]
+
+
+def searches(repeat: int) -> list[Row]:
+    """Net-section chains and tear-out blocks: against size, and against trying every one."""
+    from tensionlib.joints.blocks import Form, least_block
+    from tensionlib.joints.parts import Flat
+    from tensionlib.joints.paths import least_path
+    from tests.brute import area_lost, chains, least_surface
+
+    part = Flat.plain(400.0, 12.0)
+    forms = (Form(0.0, 264.0, 0.0, 440.0), Form(192.0, 0.0, 0.0, 440.0))
+    few = max(repeat // 4, 1)
+    rows = [Row("Search of a pattern in six staggered lines")]
+    for count in (12, 48, 96, 200, 400):
+        holes = _holes(count)
+        took = best(lambda h=holes: least_path(part, h), few, 3)
+        rows.append(ms(f"least chain of {count} holes", took, 10.0 if count == 200 else None))
+    for count in (12, 48):
+        holes = _holes(count)
+        took = best(lambda h=holes: least_path(part, h, credit_behind=True, gross=1e5), few, 1)
+        rows.append(ms(f"the same of {count} holes, bolts behind credited", took))
+    for count in (8, 12):
+        holes = _holes(count)
+        took = best(lambda h=holes: least_path(part, h), few, 3)
+        tried = best(lambda h=holes: max(area_lost(part, c) for c in chains(h)), few, 1)
+        rows.append(
+            Row(f"every chain of {count} holes tried, over the search", _times(tried / took))
+        )
+    for count in (4, 12, 24, 48):
+        holes = _holes(count)
+        took = best(lambda h=holes: least_block(part, h, forms), few, 1)
+        rows.append(ms(f"least block of {count} bolts, member and forms of AS 4100", took))
+    for count in (4, 6):
+        holes = _holes(count)
+        took = best(lambda h=holes: least_block(part, h, forms), few, 1)
+        tried = best(lambda h=holes: least_surface(part, h, forms, whole=False, edges=True), 1, 1)
+        rows.append(
+            Row(f"every surface of {count} bolts tried, over the search", _times(tried / took))
+        )
+    return rows
+
+
+def _times(ratio: float) -> str:
+    return f"{ratio:.3g} times"
+
+
 def packages(quick: bool) -> list[Row]:
     """Notebooks issued from the command line, start of the interpreter and kernel included."""
     if not (NOTEBOOKS / EXAMPLE).exists():
@@ -329,6 +383,7 @@ def main() -> None:
         *imports(5 if args.quick else 15),
         *one_member(repeat),
         *arrays(repeat),
+        *searches(repeat),
         *packages(args.quick),
     ]
     print(f"{where}\n\n{table(rows)}")

@@ -1,6 +1,6 @@
 """The net-section search against every chain of random patterns, tried one by one.
 
-The brute force is written apart: plain Python, recursive, its own arithmetic.
+The brute force, `tests/brute.py`, is written apart.
 """
 
 from __future__ import annotations
@@ -13,38 +13,13 @@ from hypothesis import strategies as st
 
 from tensionlib.joints.parts import Flat, Opening, opened_angle, opened_channel
 from tensionlib.joints.paths import least_path
+from tests.brute import area_lost, chains
 
 PARTS = (
     Flat.plain(240.0, 10.0),
     opened_angle(150.0, 100.0, 12.0),
     opened_channel(150.0, 75.0, 9.5, 6.0),
 )
-
-
-def _chains(holes):
-    """Every chain: subsets in rising y, no two of one y."""
-    ordered = sorted(holes, key=lambda h: h.y)
-
-    def grow(chain, rest):
-        for i, hole in enumerate(rest):
-            if not chain or hole.y > chain[-1].y + 1e-6:
-                longer = [*chain, hole]
-                yield longer
-                yield from grow(longer, rest[i + 1 :])
-
-    yield from grow([], ordered)
-
-
-def _lost(part, chain) -> float:
-    area = 0.0
-    for i, hole in enumerate(chain):
-        area += hole.across * part.thickness(hole.y)
-        if i:
-            before = chain[i - 1]
-            s, g = abs(hole.x - before.x), hole.y - before.y
-            if s > 1e-9:
-                area -= s**2 / (4 * g) * part.thickness_between(before.y, hole.y)
-    return area
 
 
 def _behind(chain, holes) -> int:
@@ -88,9 +63,9 @@ def patterns(draw):
 def test_the_least_chain_is_the_least_of_all(pattern):
     part, holes = pattern
     found = least_path(part, holes)
-    worst = max(_lost(part, chain) for chain in _chains(holes))
+    worst = max(area_lost(part, chain) for chain in chains(holes))
     assert math.isclose(found.lost, worst, rel_tol=1e-9, abs_tol=1e-6)
-    assert math.isclose(_lost(part, [h.hole for h in found.hops]), found.lost, rel_tol=1e-9)
+    assert math.isclose(area_lost(part, [h.hole for h in found.hops]), found.lost, rel_tol=1e-9)
 
 
 @settings(max_examples=2000, deadline=None, derandomize=True)
@@ -103,9 +78,9 @@ def test_with_credit_the_governing_chain_governs_all(pattern, gross):
 
     def ratio(chain):
         carried = 1.0 if bolts == 0 else 1.0 - _behind(chain, holes) / bolts
-        return carried / (gross - _lost(part, chain))
+        return carried / (gross - area_lost(part, chain))
 
-    worst = max(ratio(chain) for chain in _chains(holes))
+    worst = max(ratio(chain) for chain in chains(holes))
     assert math.isclose(found.carried / (gross - found.lost), worst, rel_tol=1e-9)
     own = ratio([h.hole for h in found.hops])
     assert math.isclose(own, worst, rel_tol=1e-9)
