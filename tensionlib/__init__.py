@@ -27,6 +27,7 @@ if TYPE_CHECKING:
     from tensionlib.joints.ends import Bolted as Bolted
     from tensionlib.joints.ends import Gusset as Gusset
     from tensionlib.joints.ends import Welded as Welded
+    from tensionlib.joints.gusset_shape import GussetShape as GussetShape
     from tensionlib.joints.hanger import Hanger as Hanger
     from tensionlib.joints.holes import Hole as Hole
     from tensionlib.joints.holes import Pattern as Pattern
@@ -64,6 +65,7 @@ _WHERE = {
     "Covers": "joints.pattern_end",
     "FilletRun": "joints.welded_runs",
     "Gusset": "joints.ends",
+    "GussetShape": "joints.gusset_shape",
     "Hanger": "joints.hanger",
     "Hole": "joints.holes",
     "METRIC": "quantities",

@@ -10,6 +10,7 @@ from dataclasses import dataclass
 from typing import ClassVar
 
 from tensionlib.errors import InputError
+from tensionlib.joints.gusset_shape import GussetShape
 from tensionlib.joints.hanger import Hanger
 from tensionlib.joints.stated import (
     EDGES,
@@ -20,10 +21,13 @@ from tensionlib.joints.stated import (
     choice,
     in_mm,
 )
-from tensionlib.quantities import count
+from tensionlib.quantities import FORCE, Quantity, count, door, factor
 
 BOLTED_TO = ("long leg", "short leg", "leg", "web", "flange", "both flanges", "plate")
 WELDED_TO = (*BOLTED_TO, "slot", "bar")
+
+
+Force = Quantity | str
 
 
 @dataclass(frozen=True)
@@ -41,16 +45,48 @@ class Gusset(Stated):
         and the calculation says so.
     hanger : Hanger, optional
         Where the gusset is the stem of a tee hung from its support by bolts in tension.
+    shape : GussetShape, optional
+        The gusset's own outline: the spread is clipped by its edges, tear-out runs to them, its
+        free edges and its support are known.
+    compression : force, optional
+        Compression in the member when the force reverses: the gusset is proven for it too.
+    free_length : length, optional
+        Of the strip from the joint to the support; from the outline where there is one.
+    length_factor : number
+        Effective length of that strip over its free length, 1.2 unless given.
+    support_leg : length, optional
+        Leg of the fillets, on both faces, that weld the outline's one supported edge to its
+        support.
+    support_quality : str
+        "SP" or "GP".
     """
 
     thickness: Length
     steel: str
     width: Length | None = None
     hanger: Hanger | None = None
+    shape: GussetShape | None = None
+    compression: Force | None = None
+    free_length: Length | None = None
+    length_factor: float = 1.2
+    support_leg: Length | None = None
+    support_quality: str = "SP"
 
     def __post_init__(self) -> None:
         self._length("thickness", example="12 mm", due=True)
         self._length("width", example="260 mm")
+        self._length("free_length", example="150 mm")
+        self._length("support_leg", example="6 mm")
+        choice("support_quality", self.support_quality, QUALITIES)
+        k = factor("length_factor", self.length_factor, above=0.0, at_most=5.0)
+        object.__setattr__(self, "length_factor", k)
+        if self.compression is not None:
+            force = door("compression", self.compression, FORCE, at_least=0.0, example="120 kN")
+            object.__setattr__(self, "compression", force)
+        if self.shape is not None and not isinstance(self.shape, GussetShape):
+            raise InputError(f"shape: got {self.shape!r}; a GussetShape(...) is due")
+        if self.shape is None and self.support_leg is not None:
+            raise InputError("support_leg: given without the gusset's shape, which has the support")
         if self.hanger is not None and not isinstance(self.hanger, Hanger):
             raise InputError(f"hanger: got {self.hanger!r}; a Hanger(...) is due")
         if not isinstance(self.steel, str):

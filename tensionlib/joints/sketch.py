@@ -44,6 +44,7 @@ class EndView:
     `rows` are the places of bolts along the force and `lines` across it, `holes` each hole's
     (x, y); `welds` the runs (x1, y1, x2, y2). `plate_end` is where the gusset's edge crosses the
     member, `plate_width` its width there. `net` is the drawn net section, empty for none.
+    `outline` is the gusset's own outline where it is stated, `supported` its held edges.
     """
 
     section: Section
@@ -64,6 +65,8 @@ class EndView:
     net: tuple[Point, ...] = ()
     along: tuple[tuple[float, ...], ...] = ()
     across: tuple[float, ...] = ()
+    outline: tuple[Point, ...] = ()
+    supported: tuple[int, ...] = ()
 
 
 def _mm(length: float) -> str:
@@ -92,14 +95,16 @@ class _Sketch:
     def __init__(self, view: EndView) -> None:
         self.view = view
         self.joint = max([view.plate_end, *(x for x, _ in view.holes)])
-        self.back = max(55.0, 0.45 * view.width)
+        self.back = max(55.0, 0.45 * view.width, *(12.0 - x for x, _ in view.outline))
         body = max(70.0, 0.7 * view.width)
-        self.length = self.joint + body
+        self.length = max([self.joint, *(x for x, _ in view.outline)]) + body
         profile = _profile(view)
         self.box = _extent(profile, view)
         self.profile = profile
         section_width = self.box[2] - self.box[0]
-        tallest = max(view.plate_width, view.width, self.box[3] - self.box[1])
+        ys = [y for _, y in view.outline]
+        own = max(ys) - min(ys) if ys else view.plate_width
+        tallest = max(own, view.width, self.box[3] - self.box[1])
         self.scale = min(
             (_RIGHT - _LEFT) / (self.back + self.length),
             62.0 / tallest,
@@ -107,8 +112,11 @@ class _Sketch:
         )
         # What stands above the reference edge at y = 0, in the elevation and the section.
         reach = 1.12 * view.plate_width / 2
-        self.above = max(view.width / 2 + reach, view.width, self.box[3])
-        self.below = max(reach - view.width / 2, -self.box[1], 0.0)
+        high, low = view.width / 2 + reach, view.width / 2 - reach
+        if ys:
+            high, low = max(ys), min(ys)
+        self.above = max(high, view.width, self.box[3])
+        self.below = max(-low, -self.box[1], 0.0)
         self.zero = _TOP + self.above * self.scale
         self.bottom = self.zero + self.below * self.scale
         self.left = _LEFT + self.back * self.scale
@@ -142,6 +150,11 @@ class _Sketch:
 
     def _gusset(self) -> None:
         view = self.view
+        if view.outline:
+            self._line(list(view.outline), "gusset", closed=True)
+            for i in view.supported:
+                self._support(view.outline[i], view.outline[(i + 1) % len(view.outline)])
+            return
         middle, half = view.width / 2, view.plate_width / 2
         wide = half * 1.12
         x = view.plate_end
@@ -152,6 +165,22 @@ class _Sketch:
             closed=True,
         )
         self._break(left, middle - wide, middle + wide)
+
+    def _support(self, start: Point, end: Point) -> None:
+        """A supported edge: a heavy line with short strokes on the support's side."""
+        self._line([start, end], "weld")
+        (x1, y1), (x2, y2) = self._at(*start), self._at(*end)
+        length = max(((x2 - x1) ** 2 + (y2 - y1) ** 2) ** 0.5, 1e-9)
+        ux, uy = (x2 - x1) / length, (y2 - y1) / length
+        inside = [self._at(x, y) for x, y in self.view.outline]
+        cx = sum(x for x, _ in inside) / len(inside)
+        cy = sum(y for _, y in inside) / len(inside)
+        nx, ny = (-uy, ux) if (cx - x1) * -uy + (cy - y1) * ux < 0 else (uy, -ux)
+        count = max(int(length / 2.4), 2)
+        for i in range(count + 1):
+            x, y = x1 + ux * length * i / count, y1 + uy * length * i / count
+            tip = (x + 1.8 * nx - 1.2 * ux, y + 1.8 * ny - 1.2 * uy)
+            self.items.append(Line(((x, y), tip), "break"))
 
     def _break(self, x: float, low: float, high: float) -> None:
         """A cut edge: a line with a zigzag in its middle."""
@@ -216,6 +245,8 @@ class _Sketch:
         x, y = points[-1]
         middle, half = self.view.width / 2, self.view.plate_width / 2
         top = min(self._at(0.0, middle + 1.12 * half)[1], y)
+        if self.view.outline:
+            top = min(self._at(0.0, max(v for _, v in self.view.outline))[1], y)
         self.items.append(Line(((x, y), (x, top - 0.8)), "net"))
         reach = text_width("net section") / 2
         self.items.append(Text(max(x, _LEFT + reach), top - 2.4, "net section", "middle"))

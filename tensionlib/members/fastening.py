@@ -116,17 +116,23 @@ def _lines(end: Bolted | BoltedPattern) -> list[float]:
     return sorted({in_mm(h.y) for h in end.holes.holes if h.bolt and end.at_gusset(h.element)})
 
 
-def _nearest(end: Bolted | BoltedPattern) -> float | None:
-    """Distance of the nearest two bolts, mm; None for one bolt."""
+def bolt_places(end: Bolted | BoltedPattern) -> list[tuple[float, float]]:
+    """Bolts of the element on the gusset: along the member from its end, and across from its
+    first line or its reference edge, mm."""
     if isinstance(end, BoltedPattern):
-        at = [
+        return [
             (in_mm(h.x), in_mm(h.y)) for h in end.holes.holes if h.bolt and end.at_gusset(h.element)
         ]
-    else:
-        at = [
-            (i * in_mm(end.pitch) + j * in_mm(end.stagger), j * in_mm(end.line_spacing))
-            for i in range(end.per_line)
-            for j in range(end.lines)
-        ]
+    first = in_mm(end.end_distance)
+    return [
+        (first + i * in_mm(end.pitch) + j * in_mm(end.stagger), j * in_mm(end.line_spacing))
+        for i in range(end.per_line)
+        for j in range(end.lines)
+    ]
+
+
+def _nearest(end: Bolted | BoltedPattern) -> float | None:
+    """Distance of the nearest two bolts, mm; None for one bolt."""
+    at = bolt_places(end)
     apart = [((x - u) ** 2 + (y - v) ** 2) ** 0.5 for k, (x, y) in enumerate(at) for u, v in at[:k]]
     return min(apart, default=None)

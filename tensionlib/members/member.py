@@ -7,7 +7,7 @@ from typing import Any
 
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.joints.ends import Bolted, Welded
-from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pattern_end import BoltedPattern, as_pattern
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.beside import Across, Overstrength
 from tensionlib.quantities import LENGTH, Quantity, door
@@ -97,10 +97,19 @@ class Member:
 
     @property
     def ends(self) -> tuple[End, ...]:
-        """The distinct ends: one when both are the same."""
+        """The distinct ends as they are designed: one when both are the same.
+
+        A regular bolted end on a gusset with an outline of its own is laid out hole by hole, so
+        that tear-out runs to the gusset's own edges.
+        """
         if self.far_end is None or self.far_end == self.end:
-            return (self.end,)
-        return (self.end, self.far_end)
+            return (self._laid_out(self.end),)
+        return (self._laid_out(self.end), self._laid_out(self.far_end))
+
+    def _laid_out(self, end: End) -> End:
+        if isinstance(end, Bolted) and end.plate.shape is not None:
+            return as_pattern(end, self.profile)
+        return end
 
     @property
     def profile(self) -> Section:

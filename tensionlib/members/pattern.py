@@ -22,9 +22,10 @@ from tensionlib.joints.bolt_group import (
     most_loaded,
     worst_tear_out,
 )
+from tensionlib.joints.gusset_shape import GussetPart
 from tensionlib.joints.holes import Hole
 from tensionlib.joints.opened import Opened, OpenedSheet, element_part, opened
-from tensionlib.joints.parts import Flat, Opening, check_holes
+from tensionlib.joints.parts import Flat, Opening, Part, check_holes
 from tensionlib.joints.paths import Hop, NetPath, least_path
 from tensionlib.joints.pattern_end import BoltedPattern, Covers
 from tensionlib.joints.stated import in_mm
@@ -59,7 +60,7 @@ class Grip:
     where: str
     part: Flat
     holes: tuple[Opening, ...]
-    plate: Flat
+    plate: Part
     plate_holes: tuple[Opening, ...]
     spread: Spread
 
@@ -200,9 +201,17 @@ class PatternGeometry:
         width = max(b.y for b in bolts) + beside - zero
         t_p = in_mm(self.end.plate.thickness)
         free = side is not None
-        plate = Flat.plain(width, t_p, low_free=free, high_free=free)
+        plate: Part = Flat.plain(width, t_p, low_free=free, high_free=free)
         # Only the joint's own holes are in the gusset.
         plate_holes = tuple(replace(b, x=edge - b.x, y=b.y - zero) for b in bolts)
+        shape = self.end.plate.shape
+        if shape is not None and self.end.at_gusset("" if element == self.end.to else element):
+            middle = math.fsum(b.y for b in bolts) / len(bolts)
+            own = GussetPart(shape, t_p, edge + 1e4)
+            plate_holes = tuple(
+                replace(b, x=x, y=y) for b in bolts for x, y in (own.to_part(b.x, b.y - middle),)
+            )
+            plate = own
         check_holes(plate, plate_holes)
         return Grip(
             element,
@@ -442,7 +451,7 @@ def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix:
 
 
 def _tear_out(
-    shape: PatternGeometry, part: Flat, holes: Sequence[Opening], prefix: str, sign: float
+    shape: PatternGeometry, part: Part, holes: Sequence[Opening], prefix: str, sign: float
 ) -> Inputs:
     """The bolt with the greatest force on its tear-out capacity, and its clear distance."""
     half = shape.fastener.d_f / 2
@@ -517,7 +526,7 @@ def _spacing(shape: PatternGeometry) -> dict[str, Number]:
 
 def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
     """Every edge with the bolt nearest to it."""
-    cut = shape.end.edge_kind
+    cut, outlined = shape.end.edge_kind, shape.end.plate.shape is not None
     found: list[tuple[str, str, float, str, float | None]] = []
     for grip in shape.grips:
         own, bolts = grip.part.strips[0].t, grip.bolts
@@ -529,11 +538,13 @@ def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
         if math.isfinite(side):
             found.append((f"member side{grip.where}", "rolled", side, at.mark, t))
         holes = [hole for hole in grip.plate_holes if hole.bolt]
-        first = min(holes, key=lambda b: b.x)
-        found.append((f"gusset end{grip.where}", cut, first.x, first.mark, None))
-        beside = shape.plate_side(bolts)
-        if beside is not None:
-            found.append((f"gusset side{grip.where}", cut, beside, "nearest the edge", None))
+        ends = [(grip.plate.to_end(b.x, b.y), b.mark) for b in holes]
+        beside = [
+            (min(grip.plate.to_low(b.x, b.y), grip.plate.to_high(b.x, b.y)), b.mark) for b in holes
+        ]
+        for of, (e, mark) in (("gusset end", min(ends)), ("gusset side", min(beside))):
+            if math.isfinite(e):
+                found.append((of + grip.where, cut, e, mark, None))
     return tuple(
         Inputs(
             {
@@ -541,6 +552,8 @@ def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
                 "of": of.replace("gusset", "cover plate") if shape.spliced else of,
                 "cut": how,
                 "part": of.partition(" ")[0],
+                # The far side of a gusset is no edge of plies in contact.
+                "outer": "no" if of.startswith("gusset side") and outlined else "yes",
             },
             {
                 "e": Number(e, f"bolt {mark}"),

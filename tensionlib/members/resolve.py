@@ -14,8 +14,9 @@ from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns, member_line
 from tensionlib.members.beside import Across
-from tensionlib.members.fastening import bought, room_inputs
+from tensionlib.members.fastening import bolt_places, bought, room_inputs
 from tensionlib.members.geometry import Seat, seat, thickest
+from tensionlib.members.gusset import gusset_inputs
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
 from tensionlib.quantities import ANGLE, door
@@ -148,6 +149,11 @@ def end_inputs(
     plate_steel = grade(end.plate.steel, "plate.steel")
     plate_steel.suits("plate", "plate.steel")
     tables = _tables(plate_steel, "f_yp", "f_up", "the gusset")
+    plate_numbers, own = gusset_inputs(
+        end.plate, spread_starts(end, place), getattr(end, "metal", "E48XX"), prefix
+    )
+    common |= plate_numbers
+    parts["gusset"] = own
     if isinstance(end, Welded):
         more, also = _welded(end)
         if end.to == "slot":
@@ -265,6 +271,22 @@ def _welded(end: Welded) -> tuple[dict[str, Number], dict[str, str]]:
         numbers["n_s"] = Number(2.0, _COUNTED)
         numbers["c_s"] = Number(in_mm(end.slot_clearance), _STATED)
     return numbers, {"quality": end.quality}
+
+
+def spread_starts(end: End, place: Seat) -> list[tuple[float, float]]:
+    """Where the force begins to spread in the gusset, in end coordinates (u, v), mm: each bolt,
+    or both ends of each weld; v = 0 is the middle of the bolts or of the element."""
+    if isinstance(end, Bolted | BoltedPattern):
+        at = bolt_places(end)
+        middle = math.fsum(y for _, y in at) / len(at)
+        return [(x, y - middle) for x, y in at]
+    if isinstance(end, WeldedRuns):
+        runs = [run.as_run() for run in end.runs]
+        points = [p for r in runs for p in ((r.x_1, r.y_1), (r.x_2, r.y_2))]
+        return [(x, y - place.width / 2) for x, y in points]
+    b = place.width / 2
+    first, second = in_mm(end.length_1), in_mm(end.length_2)
+    return [(0.0, -b), (0.0, b), (first, -b), (second, b)]
 
 
 def _hanger(hanger: Hanger | None, prefix: str) -> tuple[Inputs, ...]:

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 from tensionlib.calculation.result import Sketch
 from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern
@@ -35,12 +37,23 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
     """What the sketch of an end shows; `hole` is the hole diameter, 0 for a welded end."""
     place = seat(section, end)
     if isinstance(end, Bolted):
-        return _bolted(section, end, place, force, hole)
-    if isinstance(end, BoltedPattern):
-        return _pattern(section, end, place, force, hole)
-    if isinstance(end, WeldedRuns):
-        return _runs(section, end, place, force)
-    return _welded(section, end, place, force)
+        view = _bolted(section, end, place, force, hole)
+    elif isinstance(end, BoltedPattern):
+        view = _pattern(section, end, place, force, hole)
+    elif isinstance(end, WeldedRuns):
+        view = _runs(section, end, place, force)
+    else:
+        view = _welded(section, end, place, force)
+    shape = end.plate.shape
+    if shape is None:
+        return view
+    ys = [y for _, y in view.holes] or [0.0, place.width]
+    middle = sum(ys) / len(ys)
+    return replace(
+        view,
+        outline=tuple((u, v + middle) for u, v in shape.outline),
+        supported=tuple(shape.supported),
+    )
 
 
 def _plate_width(end: End, lines_apart: float, joint: float, width: float) -> float:

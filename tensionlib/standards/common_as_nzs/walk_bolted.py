@@ -21,6 +21,7 @@ from tensionlib.standards.common_as_nzs.walk_block import (
     member_blocks,
 )
 from tensionlib.standards.common_as_nzs.walk_gusset import check_gusset
+from tensionlib.standards.common_as_nzs.walk_gusset_itself import gusset_itself
 
 
 def bolted_end(
@@ -43,6 +44,7 @@ def bolted_end(
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
         _gusset_plies(rules, work, end, N_c, t_p, f_up)
         check_gusset(rules.factors, work, end, N_c, _spread(work, end), f_yp, f_up)
+        gusset_itself(rules, work, end, N_c, f_yp)
         n_g, e_p = end.take(work, "n_g"), end.take(work, "e_p")
         ply = Ply(n_g, e_p, t_p, f_yp, f_up, "e_s", "p")
         check_blocks(rules.block, work, end, N_c, gusset_blocks(end), ply)

@@ -32,7 +32,7 @@ def check_gusset(
         note="connection component other than bolt, pin or weld",
     )
     n_g, t_p = end.take(work, "n_g"), end.take(work, "t_p")
-    A_gp = work.step(gusset.gross_area, n_g, b_e, t_p)
+    A_gp = end.keep("A_gp", work.step(gusset.gross_area, n_g, b_e, t_p))
     N_py = work.step(gusset.yielding, A_gp, f_yp)
     phiN_py = work.step(gusset.design_yielding, phi, N_py)
     work.check("yield", N_c, phiN_py, "7.2", note="on the width to which the force spreads")

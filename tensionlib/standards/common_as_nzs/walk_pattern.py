@@ -17,6 +17,7 @@ from tensionlib.standards.common_as_nzs import block, bolts, detailing, gusset, 
 from tensionlib.standards.common_as_nzs.bolts_in_shear import bolt_capacity, slip_check
 from tensionlib.standards.common_as_nzs.rules import Rules
 from tensionlib.standards.common_as_nzs.walk_gusset import check_width
+from tensionlib.standards.common_as_nzs.walk_gusset_itself import gusset_itself
 
 
 @cache
@@ -118,6 +119,7 @@ def pattern_end(
             N_m = _element_force(work, end, grip, N_c)
             _plies(rules, work, end, plates, N_c, V_b, f_up)
             _gusset_width(rules, work, end, plates, N_m, f_yp, f_up)
+            gusset_itself(rules, work, end, N_c, f_yp)
             _blocks(rules, work, end, plates, N_c, f_yp, f_up)
     with work.part(label + "Bolt distances"):
         _distances(work, end)
@@ -286,7 +288,7 @@ def _gusset_width(
         note="connection component other than bolt, pin or weld",
     )
     n_g, t_p = plate.take(work, "n_e"), end.take(work, "t_p")
-    A_gp = work.step(gusset.gross_area, n_g, b_e, t_p)
+    A_gp = end.keep("A_gp", work.step(gusset.gross_area, n_g, b_e, t_p))
     phiN_py = work.step(gusset.design_yielding, phi, work.step(gusset.yielding, A_gp, f_yp))
     where = "on the width to which the force spreads"
     work.check("yield", N_m, phiN_py, "7.2", note=where)
@@ -366,6 +368,8 @@ def _edge(work: Working, end: Inputs, edge: Inputs, d_f: Entry) -> None:
     e_min = work.step(detailing.least_edge, k_e, d_f, gives=least)
     e = edge.take(work, "e", distance)
     work.check(f"least edge distance, {of}", e_min, e, "Table 9.6.2", kind="detailing")
+    if edge.choice("outer") == "no":
+        return
     limit = work.fixed("e_lim", detailing.EDGE_LIMIT, "9.6.4", note="limit of the clause")
     e_max = work.least(
         most,

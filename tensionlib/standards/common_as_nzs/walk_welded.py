@@ -11,6 +11,7 @@ from tensionlib.quantities import LENGTH
 from tensionlib.standards.common_as_nzs import gusset, welds
 from tensionlib.standards.common_as_nzs.rules import Factors, Rules
 from tensionlib.standards.common_as_nzs.walk_gusset import check_gusset
+from tensionlib.standards.common_as_nzs.walk_gusset_itself import gusset_itself
 
 LEGS = ThresholdTable(
     "least leg of a fillet weld",
@@ -37,6 +38,7 @@ def welded_end(rules: Rules, work: Working, end: Inputs, N_c: Entry) -> None:
         b = end.take(work, "b_r", WIDTH) if runs else end.take(work, "b")
         b_d = work.step(gusset.spread_welds, b, shorter_run(work, end))
         check_gusset(rules.factors, work, end, N_c, b_d, f_yp, f_up)
+        gusset_itself(rules, work, end, N_c, f_yp)
     with work.part(label + "Weld limits"):
         _limits(work, end)
 
