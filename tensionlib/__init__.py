@@ -40,6 +40,7 @@ if TYPE_CHECKING:
     from tensionlib.members.beside import Across as Across
     from tensionlib.members.beside import Overstrength as Overstrength
     from tensionlib.members.design import design as design
+    from tensionlib.members.drawings import drawings as drawings
     from tensionlib.members.member import Member as Member
     from tensionlib.package.issue import issue as issue
     from tensionlib.package.project import check_file as check_file
@@ -87,6 +88,7 @@ _WHERE = {
     "condition": "calculation.formula",
     "design": "members.design",
     "double": "steel",
+    "drawings": "members.drawings",
     "find": "steel",
     "formula": "calculation.formula",
     "grade": "steel",

@@ -99,6 +99,33 @@ class Block:
         """Net area in tension."""
         return self._area("tension", net=True)
 
+    def outlines(self, part: Part) -> tuple[tuple[Point, ...], ...]:
+        """What is torn out, as polygons in the part's axes; one where the surface is in one
+        piece."""
+        found: list[tuple[Point, ...]] = []
+        points: list[Point] = []
+
+        def close() -> None:
+            if len(points) > 2:
+                found.append(tuple(points))
+            points.clear()
+
+        for i, piece in enumerate(self.pieces):
+            first, last = (piece.x_1, piece.y_1), (piece.x_2, piece.y_2)
+            if points and points[-1] != first:
+                close()
+            if not points:
+                if i == 0 and piece.kind == "tension":
+                    # To the low edge: the corner of the free end closes the area.
+                    points.append((piece.x_1 - part.to_end(piece.x_2, piece.y_2), piece.y_1))
+                points.append(first)
+            points.append(last)
+        if self.pieces[-1].kind == "tension":
+            piece = self.pieces[-1]
+            points.append((piece.x_2 - part.to_end(piece.x_1, piece.y_1), piece.y_2))
+        close()
+        return tuple(found)
+
     def capacity(self, forms: Sequence[Form]) -> float:
         """Nominal capacity, N: the least of the forms."""
         gv, nv, gt, nt = self.A_gv, self.A_nv, self.A_gt, self.A_nt

@@ -7,12 +7,26 @@ dimensions can write them as such.
 
 from __future__ import annotations
 
+import math
+from collections.abc import Sequence
 from dataclasses import dataclass
 from itertools import pairwise
 from typing import Literal
 
 Style = Literal[
-    "member", "gusset", "hidden", "centre", "bolt", "weld", "net", "force", "dimension", "break"
+    "member",
+    "gusset",
+    "hidden",
+    "centre",
+    "bolt",
+    "weld",
+    "net",
+    "shear",
+    "tension",
+    "hatch",
+    "force",
+    "dimension",
+    "break",
 ]
 Anchor = Literal["start", "middle", "end"]
 Point = tuple[float, float]
@@ -106,6 +120,22 @@ class Scene:
             elif isinstance(item, Chain):
                 found += item.texts
         return found
+
+
+def support_strokes(start: Point, end: Point, outline: Sequence[Point]) -> list[Line]:
+    """Short strokes along a supported edge of an outline, on its outer side."""
+    (x1, y1), (x2, y2) = start, end
+    length = max(math.dist(start, end), 1e-9)
+    ux, uy = (x2 - x1) / length, (y2 - y1) / length
+    cx = sum(x for x, _ in outline) / len(outline)
+    cy = sum(y for _, y in outline) / len(outline)
+    nx, ny = (-uy, ux) if (cx - x1) * -uy + (cy - y1) * ux < 0 else (uy, -ux)
+    count = max(int(length / 2.4), 2)
+    strokes = []
+    for i in range(count + 1):
+        x, y = x1 + ux * length * i / count, y1 + uy * length * i / count
+        strokes.append(Line(((x, y), (x + 1.8 * nx - 1.2 * ux, y + 1.8 * ny - 1.2 * uy)), "break"))
+    return strokes
 
 
 def spread(wanted: list[float], sizes: list[float], gap: float) -> list[float]:

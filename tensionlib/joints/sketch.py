@@ -21,6 +21,7 @@ from tensionlib.joints.scene import (
     Text,
     chain_x,
     chain_y,
+    support_strokes,
     text_width,
 )
 from tensionlib.steel.outline import Arc, Corner, edges
@@ -169,18 +170,8 @@ class _Sketch:
     def _support(self, start: Point, end: Point) -> None:
         """A supported edge: a heavy line with short strokes on the support's side."""
         self._line([start, end], "weld")
-        (x1, y1), (x2, y2) = self._at(*start), self._at(*end)
-        length = max(((x2 - x1) ** 2 + (y2 - y1) ** 2) ** 0.5, 1e-9)
-        ux, uy = (x2 - x1) / length, (y2 - y1) / length
-        inside = [self._at(x, y) for x, y in self.view.outline]
-        cx = sum(x for x, _ in inside) / len(inside)
-        cy = sum(y for _, y in inside) / len(inside)
-        nx, ny = (-uy, ux) if (cx - x1) * -uy + (cy - y1) * ux < 0 else (uy, -ux)
-        count = max(int(length / 2.4), 2)
-        for i in range(count + 1):
-            x, y = x1 + ux * length * i / count, y1 + uy * length * i / count
-            tip = (x + 1.8 * nx - 1.2 * ux, y + 1.8 * ny - 1.2 * uy)
-            self.items.append(Line(((x, y), tip), "break"))
+        outline = [self._at(x, y) for x, y in self.view.outline]
+        self.items += support_strokes(self._at(*start), self._at(*end), outline)
 
     def _break(self, x: float, low: float, high: float) -> None:
         """A cut edge: a line with a zigzag in its middle."""
@@ -208,7 +199,7 @@ class _Sketch:
             # The gusset in the slot, or the bar in the gusset's: seen through.
             self._line([(0.0, b / 2), (end, b / 2)], "centre")
         else:
-            half = min(view.plate_width / 2, b / 2)
+            half = min(view.plate_width / 2, b / 2) if not view.outline else 0.0
             x = view.plate_end
             self._line([(x, b / 2 - half), (x, b / 2 + half)], "hidden")
         self._break(end, 0.0, b)

@@ -122,7 +122,7 @@ def design(
         assumptions=filling.written.assumptions + same,
         not_checked=filling.written.not_checked,
         sources=((chosen.source, "member and connection design"), *_materials(member)),
-        draw=lambda: sketches(member, label, holes),
+        draw=lambda: sketches(member, chosen, label, holes),
         view=view,
         version=__version__,
     )

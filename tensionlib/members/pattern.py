@@ -87,7 +87,7 @@ class PatternGeometry:
         self.place: Seat = seat(self.section, end)
         self.fastener: Bolt = bolt(end.bolts)
         self.opened: Opened = opened(self.section)
-        self._sizes = standard.hole_size
+        self._sizes, self._forms = standard.hole_size, standard.block_forms
         self.elements: dict[str, list[Opening]] = {}
         for hole in end.holes.holes:
             element = self._element(hole)
@@ -241,6 +241,26 @@ class PatternGeometry:
         """Plates that share the force: two cover plates, or one gusset."""
         return self.end.plate.number if isinstance(self.end.plate, Covers) else 1
 
+    def member_block(self, grip: Grip) -> Block | None:
+        """The block that governs in the member's element.
+
+        A surface from edge to edge is a net section with a step in shear: the net section itself
+        is weaker, and checked.
+        """
+        forms = self._forms(*self.strengths, self.end.block_tension == "uniform")
+        return least_block(grip.part, grip.holes, forms, edge_to_edge=False)
+
+    def plate_chain(self, grip: Grip) -> NetPath:
+        """The chain that takes most of the gusset, or of each cover plate."""
+        return least_path(grip.plate, grip.plate_holes)
+
+    def plate_block(self, grip: Grip) -> Block | None:
+        """The block that governs in the gusset or in each cover plate."""
+        t_p = in_mm(self.end.plate.thickness)
+        steel = grade(self.end.plate.steel, "plate.steel")
+        forms = self._forms(steel.f_y(t_p), steel.f_u(t_p), self.end.block_tension == "uniform")
+        return least_block(grip.plate, grip.plate_holes, forms, edge_to_edge=False)
+
     @cached_property
     def bolts(self) -> tuple[Opening, ...]:
         return tuple(b for grip in self.grips for b in grip.bolts)
@@ -279,7 +299,7 @@ def _spread(bolts: Sequence[Opening]) -> Spread:
 
 
 def pattern_numbers(
-    shape: PatternGeometry, standard: Standard, prefix: str
+    shape: PatternGeometry, prefix: str
 ) -> tuple[dict[str, Number], dict[str, str], dict[str, tuple[Inputs, ...]]]:
     """Numbers, choices and parts of a pattern end, beside what every bolted end has."""
     end, group = shape.end, shape.group
@@ -321,7 +341,7 @@ def pattern_numbers(
         "chain": chain_parts,
         "most loaded": (_bolt_inputs(shape, most.mark, prefix + "most loaded ", {}),),
         "grips": tuple(
-            _grip_inputs(shape, grip, standard, f"{prefix}grip {i} ")
+            _grip_inputs(shape, grip, f"{prefix}grip {i} ")
             for i, grip in enumerate(shape.grips, start=1)
         ),
         "edges": _edges(shape, prefix),
@@ -376,11 +396,9 @@ def _bolt_inputs(
     return Inputs({"mark": mark, **choices}, numbers, {}, prefix)
 
 
-def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix: str) -> Inputs:
+def _grip_inputs(shape: PatternGeometry, grip: Grip, prefix: str) -> Inputs:
     end, section = shape.end, shape.section
-    uniform = end.block_tension == "uniform"
     t = grip.part.strips[0].t
-    plate_steel = grade(end.plate.steel, "plate.steel")
     t_p = in_mm(end.plate.thickness)
     total = len(shape.bolts)
     plate_numbers = {
@@ -402,7 +420,7 @@ def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix:
             "L_o1": Number(spread.reach_low, _COUNTED),
             "L_o2": Number(spread.reach_high, _COUNTED),
         }
-    plate_chain = least_path(grip.plate, grip.plate_holes)
+    plate_chain = shape.plate_chain(grip)
     plate = Inputs(
         {"part": "gusset", "chain": _chain_words(plate_chain.hops)},
         plate_numbers,
@@ -411,25 +429,8 @@ def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix:
         {
             "tear-out": (_tear_out(shape, grip.plate, grip.plate_holes, prefix + "plate ", 1.0),),
             "chain": _hop_inputs(plate_chain.hops, t_p, prefix + "plate chain "),
-            "block": _block_inputs(
-                least_block(
-                    grip.plate,
-                    grip.plate_holes,
-                    standard.block_forms(plate_steel.f_y(t_p), plate_steel.f_u(t_p), uniform),
-                    edge_to_edge=False,
-                ),
-                total,
-                prefix + "plate ",
-            ),
+            "block": _block_inputs(shape.plate_block(grip), total, prefix + "plate "),
         },
-    )
-    # A surface from edge to edge is a net section with a step in shear: the net section itself
-    # is weaker, and checked.
-    block = least_block(
-        grip.part,
-        grip.holes,
-        standard.block_forms(*shape.strengths, uniform),
-        edge_to_edge=False,
     )
     numbers = {
         "n_e": Number(float(shape.opened.components), _COUNTED),
@@ -444,7 +445,7 @@ def _grip_inputs(shape: PatternGeometry, grip: Grip, standard: Standard, prefix:
         prefix + "member: ",
         {
             "tear-out": (_tear_out(shape, grip.part, grip.holes, prefix + "member ", -1.0),),
-            "block": _block_inputs(block, total, prefix + "member "),
+            "block": _block_inputs(shape.member_block(grip), total, prefix + "member "),
             "plate": (plate,),
         },
     )

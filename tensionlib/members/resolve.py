@@ -171,7 +171,7 @@ def end_inputs(
         else:
             more, also = _fasteners(end, place)
             shape = PatternGeometry(member, end, standard)
-            numbers, found, within = pattern_numbers(shape, standard, prefix)
+            numbers, found, within = pattern_numbers(shape, prefix)
             more, also, parts = more | numbers, also | found, parts | within
     return Inputs(choices | also, common | more, tables, prefix, parts)
 

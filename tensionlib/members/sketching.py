@@ -6,6 +6,7 @@ from dataclasses import replace
 
 from tensionlib.calculation.result import Sketch
 from tensionlib.joints.ends import Bolted, Welded
+from tensionlib.joints.part_view import PartView, describe_part, part_scene
 from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.sketch import EndView, describe, sketch_end
 from tensionlib.joints.stated import in_mm
@@ -13,13 +14,18 @@ from tensionlib.joints.svg import to_svg
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.geometry import Seat, seat
 from tensionlib.members.member import End, Member
+from tensionlib.members.part_views import part_views
+from tensionlib.members.pattern import PatternGeometry
+from tensionlib.standards import Standard
 from tensionlib.steel import Section, bolt
 
 _SPREAD = 2 * 0.5773502691896257  # both sides of the force at 30°: twice the tangent
 
 
-def sketches(member: Member, force: str, holes: tuple[float, ...]) -> tuple[Sketch, ...]:
-    """One sketch for each distinct end.
+def sketches(
+    member: Member, standard: Standard, force: str, holes: tuple[float, ...]
+) -> tuple[Sketch, ...]:
+    """One sketch for each distinct end, and the parts of one with any pattern of holes.
 
     `force` labels the force arrow; `holes` are the hole diameters of the ends in mm, 0 for a
     welded one.
@@ -30,7 +36,17 @@ def sketches(member: Member, force: str, holes: tuple[float, ...]) -> tuple[Sket
         view = end_view(member.profile, end, force, hole)
         title = "End connection, both ends" if len(ends) == 1 else f"End {i}"
         found.append(Sketch(title, to_svg(sketch_end(view)), describe(view)))
+        for part in views_of(member, end, standard):
+            scene = part_scene(part)
+            found.append(Sketch(part.title, to_svg(scene), describe_part(part)))
     return tuple(found)
+
+
+def views_of(member: Member, end: End, standard: Standard) -> list[PartView]:
+    """The parts of an end by themselves; none but for an end with any pattern of holes."""
+    if not isinstance(end, BoltedPattern):
+        return []
+    return part_views(PatternGeometry(member, end, standard))
 
 
 def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
@@ -51,6 +67,9 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
     middle = sum(ys) / len(ys)
     return replace(
         view,
+        # The gusset's own edge is drawn, not dimensioned at the joint.
+        along=tuple(stops[:-1] if view.holes else stops for stops in view.along),
+        plate_end=0.0,
         outline=tuple((u, v + middle) for u, v in shape.outline),
         supported=tuple(shape.supported),
     )
