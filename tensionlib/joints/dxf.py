@@ -6,9 +6,11 @@ failure surfaces, DIM, TEXT.
 
 from __future__ import annotations
 
+import io
 import os
 import tempfile
 from collections.abc import Sequence
+from importlib import import_module
 from itertools import pairwise
 from pathlib import Path
 from typing import Any
@@ -35,7 +37,18 @@ def _plain(text: str) -> str:
 
 
 def to_dxf(view: PartView) -> str:
-    """The drawing as the text of a DXF file (R2010)."""
+    """The drawing as the text of a DXF file (R2010), the same text for the same view."""
+    options = import_module("ezdxf").options
+    # Dates and identities would differ from run to run; ezdxf has a switch for those.
+    before = options.write_fixed_meta_data_for_testing
+    options.write_fixed_meta_data_for_testing = True
+    try:
+        return _drawn(view)
+    finally:
+        options.write_fixed_meta_data_for_testing = before
+
+
+def _drawn(view: PartView) -> str:
     from ezdxf import units
     from ezdxf.filemanagement import new
 
@@ -63,11 +76,13 @@ def to_dxf(view: PartView) -> str:
     for area in view.torn:
         for start, end in hatch(area, max((top - bottom) / 40, 2.0), view.outline):
             space.add_line(start, end, dxfattribs={"layer": "BLOCK"})
-    _dimensions(document, space, view, height)
+    _dimensions(space, view, height)
     words = [view.title, view.net_label, *view.block_labels, *view.notes]
     for k, word in enumerate(word for word in words if word):
         _text(space, word, left, bottom - height * (9 + 1.8 * k), height)
-    return _written(document)
+    stream = io.StringIO()
+    document.write(stream)
+    return stream.getvalue()
 
 
 def _outline(space: Any, view: PartView) -> None:
@@ -111,7 +126,7 @@ def _text(space: Any, text: str, x: float, y: float, height: float) -> None:
         space.add_text(shown, height=height, dxfattribs={"layer": "TEXT"}).set_placement((x, y))
 
 
-def _dimensions(document: Any, space: Any, view: PartView, height: float) -> None:
+def _dimensions(space: Any, view: PartView, height: float) -> None:
     """Chains below and to the left, as real dimensions."""
     left, bottom, _, _ = view.box
     # The library's own style prints lengths a hundred times as long.
@@ -142,19 +157,6 @@ def _dimension(
         dxfattribs={"layer": "DIM"},
     )
     dimension.render()
-
-
-def _written(document: Any) -> str:
-    """The file's text without what differs from run to run: dates and identities."""
-    import io
-
-    stream = io.StringIO()
-    document.header["$TDCREATE"] = document.header["$TDUPDATE"] = 2451544.5
-    document.header["$TDUCREATE"] = document.header["$TDUUPDATE"] = 2451544.5
-    document.header["$FINGERPRINTGUID"] = "{00000000-0000-0000-0000-000000000000}"
-    document.header["$VERSIONGUID"] = "{00000000-0000-0000-0000-000000000000}"
-    document.write(stream)
-    return stream.getvalue()
 
 
 def save_dxf(views: Sequence[PartView], folder: str | Path, stem: str) -> list[Path]:

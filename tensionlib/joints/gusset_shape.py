@@ -282,20 +282,32 @@ def _inside(polygon: Sequence[Point], point: Point) -> bool:
 
 
 def _crosses(polygon: Sequence[Point]) -> bool:
-    """Whether two edges that are not neighbours meet, or two neighbours fold onto each other."""
+    """Whether two edges that are not neighbours meet, or a corner stands twice."""
     n = len(polygon)
+    edges = [(polygon[i], polygon[(i + 1) % n]) for i in range(n)]
+    if any(math.dist(p, q) < _TINY for p, q in edges):
+        return True
+    return any(
+        _meet(*edges[i], *edges[j]) for i in range(n) for j in range(i + 2, n) if (j + 1) % n != i
+    )
 
-    def side(p: Point, q: Point, r: Point) -> float:
-        return (q[0] - p[0]) * (r[1] - p[1]) - (q[1] - p[1]) * (r[0] - p[0])
 
-    for i in range(n):
-        p, q = polygon[i], polygon[(i + 1) % n]
-        if math.dist(p, q) < _TINY:
-            return True
-        for j in range(i + 2, n):
-            if (j + 1) % n == i:
-                continue
-            r, s = polygon[j], polygon[(j + 1) % n]
-            if side(p, q, r) * side(p, q, s) <= 0 and side(r, s, p) * side(r, s, q) <= 0:
-                return True
-    return False
+def _meet(p: Point, q: Point, r: Point, s: Point) -> bool:
+    """Whether the segments pq and rs have a point in common."""
+
+    def side(a: Point, b: Point, c: Point) -> float:
+        return (b[0] - a[0]) * (c[1] - a[1]) - (b[1] - a[1]) * (c[0] - a[0])
+
+    def on(a: Point, b: Point, c: Point) -> bool:
+        return (
+            min(a[0], b[0]) - _TINY <= c[0] <= max(a[0], b[0]) + _TINY
+            and min(a[1], b[1]) - _TINY <= c[1] <= max(a[1], b[1]) + _TINY
+        )
+
+    turns = side(p, q, r), side(p, q, s), side(r, s, p), side(r, s, q)
+    if turns[0] * turns[1] < 0 and turns[2] * turns[3] < 0:
+        return True
+    touching = ((p, q, r), (p, q, s), (r, s, p), (r, s, q))
+    return any(
+        abs(turn) < _TINY and on(*three) for turn, three in zip(turns, touching, strict=True)
+    )

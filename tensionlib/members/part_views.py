@@ -47,7 +47,7 @@ def _torn(
     def total(kind: str) -> str:
         return f"{sum(p.gross for p in block.pieces if p.kind == kind):.5g}"
 
-    label = f"torn-out block: {total('shear')} mm in shear, {total('tension')} mm in tension, gross"
+    label = f"block: shear {total('shear')} mm, tension {total('tension')} mm"
     return pieces, areas, label
 
 
