@@ -34,6 +34,8 @@ if TYPE_CHECKING:
     from tensionlib.joints.pattern_end import BoltedPattern as BoltedPattern
     from tensionlib.joints.pattern_end import Covers as Covers
     from tensionlib.joints.pattern_end import as_pattern as as_pattern
+    from tensionlib.joints.pinned import Pinned as Pinned
+    from tensionlib.joints.rod import Threaded as Threaded
     from tensionlib.joints.welded_runs import FilletRun as FilletRun
     from tensionlib.joints.welded_runs import WeldedRuns as WeldedRuns
     from tensionlib.joints.welded_runs import balanced_lengths as balanced_lengths
@@ -74,9 +76,11 @@ _WHERE = {
     "Notation": "calculation.symbols",
     "Overstrength": "members.beside",
     "Pattern": "joints.holes",
+    "Pinned": "joints.pinned",
     "Source": "calculation.symbols",
     "Symbol": "calculation.symbols",
     "US": "quantities",
+    "Threaded": "joints.rod",
     "Welded": "joints.ends",
     "WeldedRuns": "joints.welded_runs",
     "Working": "calculation.working",

@@ -45,7 +45,9 @@ class EndView:
     `rows` are the places of bolts along the force and `lines` across it, `holes` each hole's
     (x, y); `welds` the runs (x1, y1, x2, y2). `plate_end` is where the gusset's edge crosses the
     member, `plate_width` its width there. `net` is the drawn net section, empty for none.
-    `outline` is the gusset's own outline where it is stated, `supported` its held edges.
+    `forked` says that a plate like the gusset stands on the other side too, and `eye` is the width
+    of an eye round the one hole, where it is wider than the member. `outline` is the gusset's own
+    outline where it is stated, `supported` its held edges.
     """
 
     section: Section
@@ -68,6 +70,8 @@ class EndView:
     across: tuple[float, ...] = ()
     outline: tuple[Point, ...] = ()
     supported: tuple[int, ...] = ()
+    forked: bool = False
+    eye: float = 0.0
 
 
 def _mm(length: float) -> str:
@@ -192,7 +196,15 @@ class _Sketch:
     def _member(self) -> None:
         view = self.view
         b, end = view.width, self.length
-        self._line([(0.0, 0.0), (end, 0.0), (end, b), (0.0, b)], "member", closed=True)
+        if view.eye > b:
+            # The eye is as wide as stated over its hole, then runs in to the member.
+            (at, _), out = view.holes[0], (view.eye - b) / 2
+            back = at + view.eye / 2
+            corners = [(0.0, -out), (back, -out), (back + 2 * out, 0.0), (end, 0.0), (end, b)]
+            corners += [(back + 2 * out, b), (back, b + out), (0.0, b + out)]
+            self._line(corners, "member", closed=True)
+        else:
+            self._line([(0.0, 0.0), (end, 0.0), (end, b), (0.0, b)], "member", closed=True)
         for y in _inner_edges(view):
             self._line([(0.0, y), (end, y)], "break")
         if view.to in ("slot", "bar"):
@@ -400,6 +412,8 @@ def _plates(
     if view.to == "both flanges":
         d = view.section.dims["d"]
         plates.append((d, low, d + t, high))
+    if view.forked:
+        plates.append((view.thickness, low, view.thickness + t, high))
     return plates
 
 
@@ -409,6 +423,8 @@ def _grips(view: EndView) -> list[tuple[float, float]]:
     if view.to == "both flanges":
         d = view.section.dims["d"]
         return [(-tp, t), (d - t, d + tp)]
+    if view.forked:
+        return [(-tp, t + tp)]
     if view.section.shape.startswith("double"):
         return [(-tp - t, t)]
     return [(-tp, t)]
@@ -431,6 +447,8 @@ def _extent(profile: list[tuple[Ring, Style]], view: EndView) -> tuple[float, fl
         xs += [-t / 2, t / 2]
     if view.to == "both flanges":
         xs.append(view.section.dims["d"] + t)
+    if view.forked:
+        xs.append(view.thickness + t)
     over = max(12.0, 0.12 * view.width)
     return min(xs), min(ys) - over, max(xs), max(ys) + over
 

@@ -8,9 +8,10 @@ from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.symbols import Notation, Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted
+from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.stated import in_mm
+from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
@@ -179,7 +180,7 @@ def _materials(member: Member) -> list[tuple[Source, str]]:
             found.append(
                 (Source(fastener.source, fastener.source, "from memory"), f"bolts: {end.bolts}")
             )
-        else:
+        elif isinstance(end, Welded | WeldedRuns):
             metal = weld_metal(end.metal)
             found.append(
                 (Source(metal.source, metal.source, "from memory"), f"welds: {metal.name}")

@@ -7,12 +7,16 @@ from dataclasses import dataclass
 from tensionlib.errors import InputError
 from tensionlib.joints.ends import Bolted
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pinned import Pinned
+from tensionlib.joints.rod import Threaded
 from tensionlib.joints.stated import in_mm
 from tensionlib.members.member import End
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section
 
 _LOOSE = 1.0  # mm a gap may be wider than its gusset; common practice, no source
+# The element of the section where an end is said to hold something else.
+_ELEMENTS = {"both flanges": "flange", "slot": "wall", "bar": "plate", "rod": "plate"}
 _LEGS = ("long leg", "short leg", "leg")
 
 # Elements of each shape that an end may take hold of, by kind of end.
@@ -64,6 +68,10 @@ def seat(section: Section, end: End) -> Seat:
     """
     kind = "bolted" if isinstance(end, Bolted | BoltedPattern) else "welded"
     accepted = (_BOLTED if kind == "bolted" else _WELDED).get(section.shape, ())
+    if isinstance(end, Pinned):
+        kind, accepted = "pinned", ("plate",) if section.shape == "flat" else ()
+    if isinstance(end, Threaded):
+        kind, accepted = "threaded", ("rod",) if section.shape == "round" else ()
     if not accepted:
         raise InputError(
             f"to: {section.designation} ({section.shape}) cannot be {kind} in this library;"
@@ -84,7 +92,9 @@ def seat(section: Section, end: End) -> Seat:
             f" {section.facing}"
         )
     _check_gap(section, end)
-    element = {"both flanges": "flange", "slot": "wall", "bar": "plate"}.get(end.to, end.to)
+    element = {"both flanges": "flange", "slot": "wall", "bar": "plate", "rod": "plate"}.get(
+        end.to, end.to
+    )
     double = section.shape.startswith("double")
     both = end.to == "both flanges"
     return Seat(

@@ -8,12 +8,14 @@ from typing import Any
 from tensionlib.errors import InputError, did_you_mean
 from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.pattern_end import BoltedPattern, as_pattern
+from tensionlib.joints.pinned import Pinned
+from tensionlib.joints.rod import Threaded
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.beside import Across, Overstrength
 from tensionlib.quantities import LENGTH, Quantity, door
 from tensionlib.steel import Grade, Section, grade, section
 
-End = Bolted | BoltedPattern | Welded | WeldedRuns
+End = Bolted | BoltedPattern | Welded | WeldedRuns | Pinned | Threaded
 
 
 @dataclass(frozen=True)
@@ -29,7 +31,7 @@ class Member:
     steel : str or Grade
         Grade of the section: "AS/NZS 3679.1 300".
     length : length
-    end : Bolted, BoltedPattern, Welded or WeldedRuns
+    end : Bolted, BoltedPattern, Welded, WeldedRuns, Pinned or Threaded
         The end connection, at both ends unless `far_end` differs.
     far_end : the same, optional
     title : str

@@ -7,10 +7,13 @@ from functools import cache
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.calculation.tables import Band, ThresholdTable
+from tensionlib.errors import InputError
 from tensionlib.joints.ends import Bolted, Gusset, Welded
 from tensionlib.joints.fillet_group import elastic_stress, properties
 from tensionlib.joints.hanger import Hanger
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pinned import Pinned
+from tensionlib.joints.rod import Threaded
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns, member_line
 from tensionlib.members.beside import Across
@@ -19,9 +22,10 @@ from tensionlib.members.geometry import Seat, seat, thickest
 from tensionlib.members.gusset import gusset_inputs
 from tensionlib.members.member import End, Member
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
-from tensionlib.quantities import ANGLE, door
+from tensionlib.quantities import ANGLE, LENGTH, door, quantity
 from tensionlib.standards import Standard
 from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
+from tensionlib.steel.bolts import SIZES
 from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
 
 _STATED = "given"
@@ -161,6 +165,12 @@ def end_inputs(
             also["shear_lag"] = "by length" if end.shear_lag_by_length else "none"
     elif isinstance(end, WeldedRuns):
         more, also = _welded_runs(section, end)
+    elif isinstance(end, Pinned):
+        more, also, within = _pinned(section, end, prefix)
+        parts |= within
+    elif isinstance(end, Threaded):
+        more, also, within = _rod(section, end, prefix)
+        parts |= within
     else:
         served = {} if service is None else {"N_star_ser": service}
         parts["bought"] = bought(end, place, prefix)
@@ -280,6 +290,8 @@ def spread_starts(end: End, place: Seat) -> list[tuple[float, float]]:
         at = bolt_places(end)
         middle = math.fsum(y for _, y in at) / len(at)
         return [(x, y - middle) for x, y in at]
+    if isinstance(end, Pinned | Threaded):
+        return [(0.0, 0.0)]
     if isinstance(end, WeldedRuns):
         runs = [run.as_run() for run in end.runs]
         points = [p for r in runs for p in ((r.x_1, r.y_1), (r.x_2, r.y_2))]
@@ -314,6 +326,74 @@ def _hanger(hanger: Hanger | None, prefix: str) -> tuple[Inputs, ...]:
     table = _table(steel, "f_y", "the hanger's flange"), steel.name
     choices = {"threads": hanger.threads, "inclined": "yes" if angle > 0.0 else "no"}
     return (Inputs(choices, numbers, {"f_y": table}, prefix + "hanger: "),)
+
+
+def _pinned(
+    section: Section, end: Pinned, prefix: str
+) -> tuple[dict[str, Number], dict[str, str], dict[str, tuple[Inputs, ...]]]:
+    width = quantity(section.leg("plate"), LENGTH)
+    numbers = {
+        "d_p": Number(in_mm(end.pin), _STATED),
+        "d_hp": Number(in_mm(end.hole), _STATED),
+        "f_ypin": Number(in_mm(end.pin_f_y), "as certified"),
+        "n_sp": Number(2.0, _COUNTED),
+        "c_p": Number(in_mm(end.gap), _STATED),
+    }
+    eye = {
+        "n_f": Number(1.0, _COUNTED),
+        "w_e": Number(end.eye(width), section.source if end.eye_width is None else _STATED),
+        "e_e": Number(in_mm(end.edge_beyond), _STATED),
+    }
+    fork = {
+        "n_f": Number(2.0, _COUNTED),
+        "w_e": Number(in_mm(end.plate.width), _STATED),
+        "e_e": Number(in_mm(end.plate_edge_beyond), _STATED),
+    }
+    parts: dict[str, tuple[Inputs, ...]] = {
+        "eye": (Inputs({}, eye, {}, prefix + "eye: "),),
+        "fork": (Inputs({}, fork, {}, prefix + "fork: "),),
+    }
+    return numbers, {"rotates": "yes" if end.rotates else "no"}, parts
+
+
+def _rod(
+    section: Section, end: Threaded, prefix: str
+) -> tuple[dict[str, Number], dict[str, str], dict[str, tuple[Inputs, ...]]]:
+    size = SIZES[end.thread]
+    if section.dims["d"] < size.d_f:
+        raise InputError(
+            f"thread: got {end.thread} on {section.designation}; the bar is thinner than the thread"
+        )
+    numbers = {
+        "A_s": Number(size.A_s, size.source),
+        "d_th": Number(size.d_f, size.source),
+        "R_f": Number(in_mm(end.fork_capacity), end.certified_by),
+        "d_p": Number(in_mm(end.pin), _STATED),
+        "d_hp": Number(in_mm(end.hole), _STATED),
+    }
+    lug = {
+        "n_f": Number(1.0, _COUNTED),
+        "w_e": Number(in_mm(end.plate.width), _STATED),
+        "e_e": Number(in_mm(end.plate_edge_beyond), _STATED),
+    }
+    sleeve: tuple[Inputs, ...] = ()
+    if end.coupling == "sleeve":
+        steel = grade(end.sleeve_steel, "sleeve_steel")
+        sizes = {
+            "d_sl": Number(in_mm(end.sleeve_diameter), _STATED),
+            "l_en": Number(in_mm(end.engagement), _STATED),
+        }
+        table = _table(steel, "f_y", "the sleeve"), steel.name
+        sleeve = (Inputs({}, sizes, {"f_y": table}, prefix + "sleeve: "),)
+    choices = {
+        "braced": "yes" if end.bracing and end.coupling == "turnbuckle" else "no",
+        "certified": f"certified: {end.certified_by}",
+    }
+    parts: dict[str, tuple[Inputs, ...]] = {
+        "fork": (Inputs({}, lug, {}, prefix + "lug: "),),
+        "sleeve": sleeve,
+    }
+    return numbers, choices, parts
 
 
 def _slotted(section: Section) -> dict[str, Number]:

@@ -8,6 +8,8 @@ from tensionlib.calculation.result import Sketch
 from tensionlib.joints.ends import Bolted, Welded
 from tensionlib.joints.part_view import PartView, describe_part, part_scene
 from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pinned import Pinned
+from tensionlib.joints.rod import Threaded
 from tensionlib.joints.sketch import EndView, describe, sketch_end
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.svg import to_svg
@@ -16,6 +18,7 @@ from tensionlib.members.geometry import Seat, seat
 from tensionlib.members.member import End, Member
 from tensionlib.members.part_views import part_views
 from tensionlib.members.pattern import PatternGeometry
+from tensionlib.quantities import LENGTH, quantity
 from tensionlib.standards import Standard
 from tensionlib.steel import Section, bolt
 
@@ -58,6 +61,10 @@ def end_view(section: Section, end: End, force: str, hole: float) -> EndView:
         view = _pattern(section, end, place, force, hole)
     elif isinstance(end, WeldedRuns):
         view = _runs(section, end, place, force)
+    elif isinstance(end, Pinned):
+        return _pinned(section, end, place, force)
+    elif isinstance(end, Threaded):
+        return _rod(section, end, place, force)
     else:
         view = _welded(section, end, place, force)
     shape = end.plate.shape
@@ -220,4 +227,65 @@ def _runs(section: Section, end: WeldedRuns, place: Seat, force: str) -> EndView
         leg_size=legs[0],
         along=tuple((0.0, run.length) for run in runs if run.angle < 0.1),
         across=(0.0, b),
+    )
+
+
+def _pinned(section: Section, end: Pinned, place: Seat, force: str) -> EndView:
+    """The eye on its pin; the fork plates are shown as the gusset."""
+    at = in_mm(end.edge_beyond)
+    edge = at + in_mm(end.plate_edge_beyond)
+    middle, eye = place.width / 2, end.eye(quantity(place.width, LENGTH))
+    return EndView(
+        section=section,
+        to="plate",
+        element=place.element,
+        width=place.width,
+        thickness=place.thickness,
+        plate_thickness=in_mm(end.plate.thickness),
+        plate_end=edge,
+        plate_width=in_mm(end.plate.width),
+        force=force,
+        notes=(
+            section.designation.partition(",")[0],
+            f"2 fork plates {in_mm(end.plate.thickness):g} mm",
+            f"pin {in_mm(end.pin):g} mm",
+            f"hole {in_mm(end.hole):g} mm",
+        ),
+        holes=((at, middle),),
+        hole=in_mm(end.hole),
+        bolt=in_mm(end.pin),
+        net=((at, middle - eye / 2), (at, middle), (at, middle + eye / 2)),
+        along=((0.0, at, edge),),
+        across=(0.0, middle, place.width),
+        forked=True,
+        eye=eye,
+    )
+
+
+def _rod(section: Section, end: Threaded, place: Seat, force: str) -> EndView:
+    """The lug with the fork's pin; the bought fork itself is not drawn."""
+    d, beyond = place.width, in_mm(end.plate_edge_beyond)
+    at = -0.9 * in_mm(end.plate.width)
+    coupling = () if end.coupling == "none" else (end.coupling,)
+    return EndView(
+        section=section,
+        to="bar",
+        element=place.element,
+        width=d,
+        thickness=place.thickness,
+        plate_thickness=in_mm(end.plate.thickness),
+        plate_end=at + beyond,
+        plate_width=in_mm(end.plate.width),
+        force=force,
+        notes=(
+            f"{section.designation.partition(',')[0]}, thread {end.thread}",
+            f"lug {in_mm(end.plate.thickness):g} mm",
+            f"fork's pin {in_mm(end.pin):g} mm",
+            *coupling,
+        ),
+        holes=((at, d / 2),),
+        hole=in_mm(end.hole),
+        bolt=in_mm(end.pin),
+        along=((at, at + beyond),),
+        across=(),
     )

@@ -52,6 +52,10 @@ RANGES = {
 }
 
 
+# Symbols that stay real only in a range of their own: of the column curve, where ξλ exceeds 90.
+OWN_RANGES = {"xi": (4.0, 6.0), "lambda_c": (30.0, 200.0), "lambda_n": (20.0, 200.0)}
+
+
 def _value(role: Role, rng: random.Random) -> float:
     if role.name == "count":
         return float(rng.randint(1, 12))
@@ -60,7 +64,12 @@ def _value(role: Role, rng: random.Random) -> float:
 
 
 def _values(formula: Formula, rng: random.Random) -> list[float]:
-    return [_value(symbol.role, rng) for symbol in formula.symbols]
+    return [
+        rng.uniform(*OWN_RANGES[symbol.name])
+        if symbol.name in OWN_RANGES
+        else _value(symbol.role, rng)
+        for symbol in formula.symbols
+    ]
 
 
 def _with_constants(formula: Formula | Condition, change) -> types.FunctionType:

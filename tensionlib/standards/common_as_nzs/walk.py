@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
-from tensionlib.standards.common_as_nzs import bolts, detailing, hole_sizes, tension
+from tensionlib.standards.common_as_nzs import bolts, detailing, hole_sizes, rods, tension
 from tensionlib.standards.common_as_nzs.bolts_in_shear import joint_length
 from tensionlib.standards.common_as_nzs.rules import Rules
 from tensionlib.standards.common_as_nzs.walk_bending import bending_checks, service_lines
@@ -19,6 +19,8 @@ from tensionlib.standards.common_as_nzs.walk_pattern import (
     pattern_deduction,
     pattern_end,
 )
+from tensionlib.standards.common_as_nzs.walk_pinned import eye_net_area, pinned_end
+from tensionlib.standards.common_as_nzs.walk_rod import rod_end, thread_area
 from tensionlib.standards.common_as_nzs.walk_welded import (
     shear_lag_of_slot,
     shorter_run,
@@ -81,7 +83,10 @@ def design(
         phiN_t = work.least(
             "phiN_t", *capacities, title="design capacity of the member", clause="7.1"
         )
-        N_min = work.step(bolts.minimum_action, phiN_t)
+        own_capacity = any(
+            end.choice("kind") == "rod" and end.choice("braced") == "yes" for end in ends
+        )
+        N_min = work.step(rods.rod_action if own_capacity else bolts.minimum_action, phiN_t)
         actions = [force, N_min] if N_os is None else [force, N_min, N_os]
         N_c = work.greatest(
             "N_star_c",
@@ -97,6 +102,10 @@ def design(
             bolted_end(rules, work, end, N_c, f_y, f_u)
         elif end.choice("kind") == "bolted pattern":
             pattern_end(rules, work, end, N_c, f_y, f_u)
+        elif end.choice("kind") == "pinned":
+            pinned_end(rules, work, end, N_c, f_y, f_u)
+        elif end.choice("kind") == "rod":
+            rod_end(rules, work, end, N_c, f_u)
         else:
             welded_end(rules, work, end, N_c)
         hanger_checks(rules, work, end, N_c)
@@ -137,8 +146,11 @@ def _slenderness(work: Working, member: Inputs) -> None:
 
 def _net_section(work: Working, member: _Member, end: Inputs) -> Entry | None:
     """Net area, k_t and the check; gives the design capacity, or None where not covered."""
-    A_d = _deduction(work, end)
-    if A_d is None:
+    own = {"pinned": eye_net_area, "rod": thread_area}.get(end.choice("kind"))
+    A_d = None if own is not None else _deduction(work, end)
+    if own is not None:
+        A_n = own(work, end)
+    elif A_d is None:
         work.note("Welded end without holes: the net area is the gross area.", "9.1.10")
         A_n = member.A_g
     else:
@@ -208,6 +220,7 @@ def connection_case(end: Inputs) -> str:
         ("tee", "flange"): "tee by flange",
         ("flat", "plate"): "concentric",
         ("round", "bar"): "concentric",
+        ("round", "rod"): "concentric",
     }.get((shape, to), "")
 
 
