@@ -207,7 +207,7 @@ class _Sketch:
             self._line([(0.0, 0.0), (end, 0.0), (end, b), (0.0, b)], "member", closed=True)
         for y in _inner_edges(view):
             self._line([(0.0, y), (end, y)], "break")
-        if view.to in ("slot", "bar"):
+        if view.to in ("slot", "bar", "rod"):
             # The gusset in the slot, or the bar in the gusset's: seen through.
             self._line([(0.0, b / 2), (end, b / 2)], "centre")
         else:
@@ -303,7 +303,8 @@ class _Sketch:
         profile = [_curve(loop, at, style) for loop, style in self.profile]
         # A gusset in a tube's slots stands before the tube.
         self.items += [*profile, *plates] if self.view.to == "slot" else [*plates, *profile]
-        for y in sorted({y for _, y in self.view.holes}):
+        held = [] if self.view.to == "rod" else self.view.holes
+        for y in sorted({y for _, y in held}):
             for x1, x2 in _grips(self.view):
                 out = 0.55 * self.view.bolt
                 self.items.append(Line((at(x1 - out, y), at(x2 + out, y)), "centre"))
@@ -404,7 +405,7 @@ def _plates(
     """The gussets of the section as rectangles (x1, y1, x2, y2)."""
     t, b = view.plate_thickness, view.width
     low, high = box[1], box[3]
-    if view.to == "slot":
+    if view.to in ("slot", "rod"):
         return [(-t / 2, low, t / 2, high)]
     if view.to == "bar":
         return [(-t / 2, low, t / 2, 0.0), (-t / 2, b, t / 2, high)]
@@ -443,7 +444,7 @@ def _extent(profile: list[tuple[Ring, Style]], view: EndView) -> tuple[float, fl
             ys += [c.y for c in loop]
     t = view.plate_thickness
     xs.append(-t)
-    if view.to in ("slot", "bar"):
+    if view.to in ("slot", "bar", "rod"):
         xs += [-t / 2, t / 2]
     if view.to == "both flanges":
         xs.append(view.section.dims["d"] + t)

@@ -264,28 +264,32 @@ def _pinned(section: Section, end: Pinned, place: Seat, force: str) -> EndView:
 
 def _rod(section: Section, end: Threaded, place: Seat, force: str) -> EndView:
     """The lug with the fork's pin; the bought fork itself is not drawn."""
-    d, beyond = place.width, in_mm(end.plate_edge_beyond)
-    at = -0.9 * in_mm(end.plate.width)
+    d, beyond, lug = place.width, in_mm(end.plate_edge_beyond), in_mm(end.plate.width)
+    # The fork stands between the lug and the rod's end; a bought part, it is left out.
+    at, low, high = -beyond - 1.5 * d, (d - lug) / 2, (d + lug) / 2
+    left = at - 1.2 * lug
     coupling = () if end.coupling == "none" else (end.coupling,)
     return EndView(
         section=section,
-        to="bar",
+        to="rod",
         element=place.element,
         width=d,
         thickness=place.thickness,
         plate_thickness=in_mm(end.plate.thickness),
-        plate_end=at + beyond,
-        plate_width=in_mm(end.plate.width),
+        plate_end=0.0,
+        plate_width=lug,
         force=force,
         notes=(
             f"{section.designation.partition(',')[0]}, thread {end.thread}",
             f"lug {in_mm(end.plate.thickness):g} mm",
             f"fork's pin {in_mm(end.pin):g} mm",
             *coupling,
+            "fork not drawn",
         ),
         holes=((at, d / 2),),
         hole=in_mm(end.hole),
         bolt=in_mm(end.pin),
         along=((at, at + beyond),),
-        across=(),
+        across=(low, d / 2, high),
+        outline=((left, low), (at + beyond, low), (at + beyond, high), (left, high)),
     )
