@@ -3,7 +3,7 @@
 End coordinates: u runs along the member from its end towards its body, v across to the left; the
 origin is the member's end on the line of its bolts or the middle of its welds. Lengths in mm,
 angles in rad. The rules of spreading, interruption and buckling length are common practice, no
-source.
+source; the rest is plane geometry and statics.
 """
 
 from __future__ import annotations
@@ -12,6 +12,7 @@ import math
 from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cached_property
+from numbers import Integral
 
 from tensionlib.errors import InputError
 from tensionlib.joints.stated import Length, in_mm
@@ -20,6 +21,7 @@ from tensionlib.quantities import ANGLE, LENGTH, Quantity, door
 Point = tuple[float, float]
 _TAN_30 = math.tan(math.pi / 6)
 _TINY = 1e-9
+_SAME = 1e-6  # mm: places no farther apart than this are one place
 
 
 @dataclass(frozen=True, slots=True)
@@ -48,7 +50,7 @@ class Width:
 @dataclass(frozen=True, slots=True)
 class SupportRun:
     """A supported edge: its length, and for a unit tension in the member the parts along and
-    square to the edge and the lever of the square part about the edge's middle."""
+    square to the edge and the lever of the tension about the edge's middle."""
 
     edge: int
     length: float
@@ -64,7 +66,7 @@ class GussetShape:
     Parameters
     ----------
     corners : sequence of (length, length)
-        In turn round the outline, three or more.
+        In turn round the outline either way, three or more.
     supported : sequence of int
         Edges held by the beam or column, counted from 0; edge i runs from corner i to the next.
     member_at : (length, length)
@@ -75,8 +77,9 @@ class GussetShape:
     Raises
     ------
     InputError
-        For fewer than three corners, edges that cross, a supported edge that is not there, or a
-        member whose end is not on the gusset.
+        For fewer than three corners, a corner that stands twice, edges that cross or touch, a
+        supported edge that is not there or stands twice, or a member whose end does not lie inside
+        the gusset.
     """
 
     corners: Sequence[tuple[Length, Length]]
@@ -91,23 +94,33 @@ class GussetShape:
             first, second = (door(name, each, LENGTH, example="120 mm") for each in value)
             return first, second
 
+        for name in ("corners", "supported"):
+            value = getattr(self, name)
+            if not isinstance(value, Sequence) or isinstance(value, str):
+                raise InputError(f"{name}: got {value!r}; a list or tuple is due")
         corners = tuple(pair(f"corner {i}", each) for i, each in enumerate(self.corners))
         if len(corners) < 3:
             raise InputError(f"corners: got {len(corners)}; three or more are due")
         object.__setattr__(self, "corners", corners)
         object.__setattr__(self, "member_at", pair("member_at", self.member_at))
         object.__setattr__(self, "angle", door("angle", self.angle, ANGLE, example="40 deg"))
-        held = tuple(self.supported)
+        last = len(corners) - 1
+        for edge in self.supported:
+            if not isinstance(edge, Integral) or isinstance(edge, bool) or not 0 <= edge <= last:
+                raise InputError(f"supported: got {edge!r}; edges are counted 0 to {last}")
+        held = tuple(int(edge) for edge in self.supported)
         for edge in held:
-            if not isinstance(edge, int) or not 0 <= edge < len(corners):
-                raise InputError(
-                    f"supported: got {edge!r}; edges are counted 0 to {len(corners) - 1}"
-                )
+            if held.count(edge) > 1:
+                raise InputError(f"supported: edge {edge} stands twice; give each edge once")
         object.__setattr__(self, "supported", held)
-        if _crosses(self.outline):
-            raise InputError("corners: two edges cross or touch; give the corners in turn")
-        if not _inside(self.outline, (0.0, 0.0)):
-            raise InputError("member_at: the member's end is not on the gusset; it lies outside")
+        # In the gusset's own axes, so that no turning blurs what touches.
+        _check_outline([(in_mm(x), in_mm(y)) for x, y in corners])
+        if not _inside(self.outline, (0.0, 0.0)) or self._nearest((0.0, 0.0)).distance < _SAME:
+            x, y = self.member_at
+            raise InputError(
+                f"member_at: got ({x}, {y}), on the gusset's edge or outside; the member's end"
+                " lies inside the gusset's outline"
+            )
 
     @cached_property
     def outline(self) -> tuple[Point, ...]:
@@ -127,8 +140,19 @@ class GussetShape:
         return corners[i], corners[(i + 1) % len(corners)]
 
     def ray(self, u: float, v: float, du: float, dv: float) -> Hit:
-        """From a point inside, in a direction of unit length, to the outline."""
-        best: Hit | None = None
+        """From a point of the gusset, in a direction of unit length, to where the gusset ends.
+
+        A ray that only touches a corner or runs along an edge goes on. One that leaves where a
+        free and a supported edge meet leaves through the free one.
+
+        Raises
+        ------
+        InputError
+            For a point that is not on the gusset.
+        """
+        if not self._holds((u, v)):
+            raise InputError(f"gusset: the point ({u:g}, {v:g}) mm is not on it")
+        met = []
         for i in range(len(self.outline)):
             (a, b), (c, d) = self.edge(i)
             eu, ev = c - a, d - b
@@ -137,11 +161,28 @@ class GussetShape:
                 continue
             t = ((a - u) * ev - (b - v) * eu) / cross
             s = ((a - u) * dv - (b - v) * du) / cross
-            if t > -_TINY and -_TINY <= s <= 1 + _TINY and (best is None or t < best.distance):
-                best = Hit(max(t, 0.0), i)
-        if best is None:
-            raise InputError(f"gusset: the point ({u:g}, {v:g}) mm is not on it")
-        return best
+            if t > -_SAME and -_TINY <= s <= 1 + _TINY:
+                met.append(Hit(max(t, 0.0), i))
+        met.sort(key=lambda hit: hit.distance)
+        for k, hit in enumerate(met):
+            there = [h for h in met if abs(h.distance - hit.distance) < _SAME]
+            beyond = [h.distance for h in met[k:] if h not in there]
+            if beyond:
+                middle = (hit.distance + beyond[0]) / 2
+                if self._holds((u + middle * du, v + middle * dv)):
+                    continue
+            return min(there, key=lambda h: h.edge in self.supported)
+        # Off the outline by less than counts, and leaving.
+        return Hit(0.0, self._nearest((u, v)).edge)
+
+    def _nearest(self, point: Point) -> Hit:
+        """The edge nearest to a point."""
+        apart = [_apart(point, *self.edge(i)) for i in range(len(self.outline))]
+        return Hit(min(apart), apart.index(min(apart)))
+
+    def _holds(self, point: Point) -> bool:
+        """Whether a point is on the gusset, its edges included."""
+        return _inside(self.outline, point) or self._nearest(point).distance < _SAME
 
     def _what(self, edge: int) -> str:
         return "support" if edge in self.supported else "free edge"
@@ -149,38 +190,30 @@ class GussetShape:
     def width(self, starts: Sequence[Point], u_last: float) -> Width:
         """The width at u = `u_last` over which the force spreads at 30 degrees from `starts`.
 
-        A spread that runs out through an edge counts no farther than where it leaves, and the
-        line across no farther than the outline; a supported edge cuts it as a free one does.
+        It counts no farther than the outline does on the line across, nor than the least that the
+        outline leaves of the spread on its way there; a supported edge cuts it as a free one does.
+
+        Raises
+        ------
+        InputError
+            Where the line across meets no plate in the middle of the spread.
         """
         low, high = _bounds(starts, u_last)
         middle = min(max(0.0, low), high)
-        cut_low = cut_high = ""
-        for sign in (-1.0, 1.0):
-            limit = low if sign < 0 else high
-            reaches = [(sign * v + (u - u_last) * _TAN_30, (u, v)) for u, v in starts]
-            start = max(reaches)[1]
-            hits = [
-                (middle + sign * hit.distance, hit.edge)
-                for hit in [self.ray(u_last, middle, 0.0, sign)]
-            ]
-            reach = math.hypot(start[0] - u_last, limit - start[1])
-            if reach > _TINY:
-                hit = self.ray(*start, (u_last - start[0]) / reach, (limit - start[1]) / reach)
-                if hit.distance < reach - _TINY:
-                    at = start[1] + (limit - start[1]) * hit.distance / reach
-                    hits.append((at, hit.edge))
-            for at, edge in hits:
-                if sign * at < sign * limit - _TINY:
-                    limit = at
-                    if sign < 0:
-                        cut_low = self._what(edge)
-                    else:
-                        cut_high = self._what(edge)
-            if sign < 0:
-                low = limit
-            else:
-                high = limit
-        return Width(low, high, cut_low, cut_high)
+        ends, cuts = [], []
+        for sign, limit in ((-1.0, low), (1.0, high)):
+            start = max(starts, key=lambda at: sign * at[1] + (at[0] - u_last) * _TAN_30)
+            line = self.ray(u_last, middle, 0.0, sign)
+            found = [(middle + sign * line.distance, line.edge)]
+            for i in range(len(self.outline)):
+                depth = _least_depth(*self.edge(i), start, u_last, sign)
+                if depth is not None:
+                    found.append((start[1] + sign * depth, i))
+            at, edge = min(found, key=lambda each: sign * each[0])
+            cut = sign * at < sign * limit - _TINY
+            ends.append(at if cut else limit)
+            cuts.append(self._what(edge) if cut else "")
+        return Width(ends[0], max(ends), cuts[0], cuts[1])
 
     def strips(
         self, u_last: float, width: Width
@@ -198,12 +231,24 @@ class GussetShape:
         return first, second, third
 
     def free_edges(self) -> list[tuple[int, float]]:
-        """Each edge that is not supported, with its length."""
-        return [
-            (i, math.dist(*self.edge(i)))
-            for i in range(len(self.outline))
-            if i not in self.supported
-        ]
+        """Each edge that is not supported, with its length; edges that go straight on from one
+        another are one, under the number of the first."""
+        n = len(self.outline)
+        free = [i for i in range(n) if i not in self.supported]
+        found: dict[int, float] = {}
+        for i in free:
+            first = i
+            while (before := (first - 1) % n) in free and before != i:
+                if not self._straight(before, first):
+                    break
+                first = before
+            found[first] = found.get(first, 0.0) + math.dist(*self.edge(i))
+        return list(found.items())
+
+    def _straight(self, i: int, j: int) -> bool:
+        """Whether edge j goes straight on from edge i."""
+        (start, corner), (_, end) = self.edge(i), self.edge(j)
+        return _apart(corner, start, end) < _SAME
 
     def support_runs(self) -> list[SupportRun]:
         """Each supported edge and what a unit tension along +u on v = 0 puts on it."""
@@ -272,6 +317,29 @@ def _bounds(starts: Sequence[Point], u_last: float) -> Point:
     return low, high
 
 
+def _least_depth(a: Point, b: Point, start: Point, u_last: float, sign: float) -> float | None:
+    """How near to the line along the force through `start` an edge comes inside the spread from
+    `start` to u = `u_last`, on the side of `sign`; None where it stays outside."""
+    # Coordinates in the spread: s back from the start, w out to the side; it is where
+    # 0 < w < s tan 30 and s < reach. What only touches it is outside.
+    reach = start[0] - u_last
+    (s_1, w_1), (s_2, w_2) = ((start[0] - u, sign * (v - start[1])) for u, v in (a, b))
+    begin, finish = 0.0, 1.0
+    for at_1, at_2 in (
+        (w_1, w_2),
+        (s_1 * _TAN_30 - w_1 - _SAME, s_2 * _TAN_30 - w_2 - _SAME),
+        (reach - s_1 - _SAME, reach - s_2 - _SAME),
+    ):
+        if at_1 < 0.0 and at_2 < 0.0:
+            return None
+        if at_1 < 0.0 or at_2 < 0.0:
+            share = at_1 / (at_1 - at_2)
+            begin, finish = (max(begin, share), finish) if at_1 < 0 else (begin, min(finish, share))
+    if begin >= finish:
+        return None
+    return max(min(w_1 + k * (w_2 - w_1) for k in (begin, finish)), 0.0)
+
+
 def _inside(polygon: Sequence[Point], point: Point) -> bool:
     x, y = point
     inside = False
@@ -281,33 +349,43 @@ def _inside(polygon: Sequence[Point], point: Point) -> bool:
     return inside
 
 
-def _crosses(polygon: Sequence[Point]) -> bool:
-    """Whether two edges that are not neighbours meet, or a corner stands twice."""
-    n = len(polygon)
-    edges = [(polygon[i], polygon[(i + 1) % n]) for i in range(n)]
-    if any(math.dist(p, q) < _TINY for p, q in edges):
-        return True
-    return any(
-        _meet(*edges[i], *edges[j]) for i in range(n) for j in range(i + 2, n) if (j + 1) % n != i
-    )
+def _apart(point: Point, a: Point, b: Point) -> float:
+    """Distance of a point from the segment ab."""
+    du, dv = b[0] - a[0], b[1] - a[1]
+    k = ((point[0] - a[0]) * du + (point[1] - a[1]) * dv) / (du * du + dv * dv)
+    k = min(max(k, 0.0), 1.0)
+    return math.hypot(a[0] + k * du - point[0], a[1] + k * dv - point[1])
 
 
-def _meet(p: Point, q: Point, r: Point, s: Point) -> bool:
-    """Whether the segments pq and rs have a point in common."""
+def _check_outline(corners: Sequence[Point]) -> None:
+    """Refuse a corner that stands twice, and edges that cross, touch or fold back."""
+    n = len(corners)
+    for i in range(n):
+        for j in range(i + 1, n):
+            if math.dist(corners[i], corners[j]) < _SAME:
+                raise InputError(
+                    f"corners: corner {j} is the same point as corner {i}; give each corner once"
+                )
+    edges = [(corners[i], corners[(i + 1) % n]) for i in range(n)]
+    for i in range(n):
+        for j in range(i + 1, n):
+            if _meet(edges[i], edges[j]):
+                raise InputError(
+                    f"corners: two edges cross or touch, edges {i} and {j}; give the corners in"
+                    " turn round the outline"
+                )
+
+
+def _meet(one: tuple[Point, Point], other: tuple[Point, Point]) -> bool:
+    """Whether two segments meet elsewhere than in a corner they share."""
 
     def side(a: Point, b: Point, c: Point) -> float:
         return (b[0] - a[0]) * (c[1] - a[1]) - (b[1] - a[1]) * (c[0] - a[0])
 
-    def on(a: Point, b: Point, c: Point) -> bool:
-        return (
-            min(a[0], b[0]) - _TINY <= c[0] <= max(a[0], b[0]) + _TINY
-            and min(a[1], b[1]) - _TINY <= c[1] <= max(a[1], b[1]) + _TINY
-        )
-
-    turns = side(p, q, r), side(p, q, s), side(r, s, p), side(r, s, q)
-    if turns[0] * turns[1] < 0 and turns[2] * turns[3] < 0:
+    free = [(p, *other) for p in one if p not in other] + [(p, *one) for p in other if p not in one]
+    if any(_apart(*each) < _SAME for each in free):
         return True
-    touching = ((p, q, r), (p, q, s), (r, s, p), (r, s, q))
-    return any(
-        abs(turn) < _TINY and on(*three) for turn, three in zip(turns, touching, strict=True)
-    )
+    if len(free) < 4:
+        return False
+    (p, q), (r, s) = one, other
+    return side(p, q, r) * side(p, q, s) < 0 and side(r, s, p) * side(r, s, q) < 0

@@ -162,7 +162,7 @@ def as_pattern(end: Bolted, section: Section) -> BoltedPattern:
         threads=end.threads,
         holes=holes,
         plate=end.plate,
-        plate_end_distance=end.plate_end_distance,
+        plate_end_distance=end.plate_end_distance or end.end_distance,
         plate_edge_distance=end.plate_edge_distance,
         edge_kind=end.edge_kind,
         packing=end.packing,

@@ -13,7 +13,7 @@ import pytest
 from tensionlib.package.execute import execute
 
 FOLDER = Path(__file__).resolve().parents[2] / "notebooks"
-NOTEBOOKS = ["one-member", "own-formulas", "schedule-to-package"]
+NOTEBOOKS = ["joint-studies", "one-member", "own-formulas", "schedule-to-package"]
 MIMETYPE = "application/vnd.tensionlib+json"
 # What Python shows of an object that has no reading of its own, and numbers that are none.
 RAW = re.compile(r"np\.float64|object at 0x|<(?:tensionlib|function|class|IPython|bound)\b|\bnan\b")
@@ -164,3 +164,24 @@ def test_own_formulas_lead_the_calculation_and_a_handcalcs_cell_stands_beside():
     cell = next(text for text in latex if "margin" in text)
     assert r"\text{kN}" in cell
     assert r"\mu" not in cell
+
+
+def test_each_joint_study_ends_as_its_words_say():
+    found = {c["mark"]: c for c in _calculations("joint-studies")}
+    governing = {mark: c["verdict"]["governing"]["name"] for mark, c in found.items()}
+    assert governing == {
+        "JS1": "net section rupture",
+        "JS2": "block shear",
+        "RB2": "least edge distance, member end",
+        "JS4": "weld, most stressed point",
+        "JS5": "net section rupture",
+        "JS6": "area beyond the hole",
+        "JS7": "net section rupture",
+    }
+    fails = {mark for mark, c in found.items() if not c["verdict"]["passes"]}
+    assert fails == {"RB2"}
+    for mark in ("JS1", "JS2", "RB2", "JS7"):
+        titles = [sketch["title"] for sketch in found[mark]["sketches"]]
+        assert len(titles) >= 3
+    said = "".join(_seen(output) for output in _outputs("joint-studies"))
+    assert "utilisation 0.864" in said
