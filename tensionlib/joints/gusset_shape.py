@@ -250,6 +250,12 @@ class GussetShape:
         (start, corner), (_, end) = self.edge(i), self.edge(j)
         return _apart(corner, start, end) < _SAME
 
+    def edge_distance(self, u: float, v: float) -> float:
+        """From a point square to the nearest free edge, which may lie askew to the force; infinite
+        where no edge is free."""
+        free = [i for i in range(len(self.outline)) if i not in self.supported]
+        return min((_apart((u, v), *self.edge(i)) for i in free), default=math.inf)
+
     def support_runs(self) -> list[SupportRun]:
         """Each supported edge and what a unit tension along +u on v = 0 puts on it."""
         out = []

@@ -23,6 +23,7 @@ import pytest
 from tensionlib.joints.bolt_group import elastic_shares, most_loaded
 from tensionlib.joints.fillet_group import Run, elastic_stress, properties
 from tensionlib.joints.parts import Opening
+from tensionlib.standards.common_as_nzs import pattern, welds
 from tests.printed import agrees
 
 ROOT_2 = math.sqrt(2.0)
@@ -129,3 +130,38 @@ def test_shigley_9_1_a_fitting_welded_on_three_sides():
     peak = elastic_stress(group, 100.0)
     assert agrees(25_000 * peak.size, "43.9")
     assert peak.y == pytest.approx(-group.y_c)
+
+
+# By the formulas that a calculation prints --------------------------------------------------
+
+
+def test_the_printed_lines_give_the_examples_of_bolts():
+    """Salmon 4.12.1 and Shigley 8-7 by the lines V_x, V_y and their resultant."""
+    V_x = pattern.share_along(24.0, 6.0, -5.0, 2.0, 60.0)
+    V_y = pattern.share_across(24.0, -5.0, 3.0, 60.0)
+    assert agrees(V_x, "8.0")
+    assert agrees(abs(V_y), "6.0")
+    assert agrees(pattern.resultant(V_x, V_y), "10.0")
+    I_b = 4 * (75.0**2 + 60.0**2)
+    for y, printed in ((75.0, "21.0"), (-75.0, "14.8")):
+        along = pattern.share_along(16.0, 4.0, -425.0, y, I_b)
+        assert agrees(
+            pattern.resultant(along, pattern.share_across(16.0, -425.0, 60.0, I_b)), printed
+        )
+
+
+def test_the_printed_lines_give_the_example_of_the_weld():
+    """Shigley 9-1 by the lines τ_x, τ_y and their resultant."""
+    runs = [
+        Run("bottom", *downwards(-56, 0), *downwards(0, 0), 6.0),
+        Run("long", *downwards(0, 0), *downwards(0, 190), 6.0),
+        Run("top", *downwards(-56, 190), *downwards(0, 190), 6.0),
+    ]
+    group = properties(runs)
+    peak = elastic_stress(group, 100.0)
+    A_w = welds.throats_of_plies(1.0, group.area)
+    I_w = welds.inertia_of_plies(1.0, group.I_p)
+    e = group.y_c - 100.0
+    along = welds.throat_stress_along(25_000.0, A_w, e, peak.y, I_w)
+    across = welds.throat_stress_across(25_000.0, e, peak.x, I_w)
+    assert agrees(welds.throat_stress(along, across), "43.9")
