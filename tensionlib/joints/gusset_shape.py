@@ -196,7 +196,8 @@ class GussetShape:
         Raises
         ------
         InputError
-            Where the line across meets no plate in the middle of the spread.
+            Where there is no plate in the middle of the line across, or none that the force
+            reaches straight from where it starts.
         """
         low, high = _bounds(starts, u_last)
         middle = min(max(0.0, low), high)
@@ -213,7 +214,12 @@ class GussetShape:
             cut = sign * at < sign * limit - _TINY
             ends.append(at if cut else limit)
             cuts.append(self._what(edge) if cut else "")
-        return Width(ends[0], max(ends), cuts[0], cuts[1])
+        if any(cuts) and ends[1] - ends[0] < _SAME:
+            raise InputError(
+                f"gusset: its outline leaves no width for the force at u = {u_last:g} mm; plate is"
+                " due all the way along the joint"
+            )
+        return Width(ends[0], ends[1], cuts[0], cuts[1])
 
     def strips(
         self, u_last: float, width: Width

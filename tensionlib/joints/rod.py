@@ -7,6 +7,7 @@ from typing import ClassVar
 
 from tensionlib.errors import InputError
 from tensionlib.joints.ends import Gusset
+from tensionlib.joints.pinned import holds_hole, plain_plate
 from tensionlib.joints.stated import Length, Stated, choice, in_mm
 from tensionlib.quantities import FORCE, Quantity, door
 from tensionlib.steel.bolts import SIZES
@@ -16,7 +17,9 @@ COUPLINGS = ("none", "turnbuckle", "sleeve")
 
 @dataclass(frozen=True)
 class Threaded(Stated):
-    """The threaded end of a round bar.
+    """The threaded end of a round bar, in a bought fork on a lug.
+
+    The thread is cut: the bar is no thinner than it.
 
     Parameters
     ----------
@@ -30,7 +33,8 @@ class Threaded(Stated):
     pin, hole : length
         Diameter of the fork's pin and of its hole in the gusset.
     plate : Gusset
-        The lug: its thickness, steel and width across the force at the pin, which is due.
+        The lug: its thickness, steel and width across the force at the pin, which is due. An
+        outline or a compression is refused.
     plate_edge_beyond : length
         Centre of the hole to the edge of the lug, along the member.
     coupling : str
@@ -44,6 +48,14 @@ class Threaded(Stated):
     bracing : bool
         Whether the rod braces: its connection is then designed for the rod's own capacity where
         it is tightened by a turnbuckle.
+    k_te : number, optional
+        Correction factor of the thread's section stated by the engineer, in place of 1.0; printed
+        with `k_te_reason`.
+
+    Raises
+    ------
+    UnitError, InputError
+        Naming the field, what came and what is accepted.
     """
 
     thread: str
@@ -73,19 +85,24 @@ class Threaded(Stated):
             raise InputError("certified_by: missing; say who certifies the fork's capacity")
         for name, example in (("pin", "24 mm"), ("hole", "26 mm"), ("plate_edge_beyond", "50 mm")):
             self._length(name, example=example, due=True)
-        if not isinstance(self.plate, Gusset):
-            raise InputError(
-                f"plate: got {self.plate!r}; a Gusset is due, for example"
-                " Gusset('16 mm', 'AS/NZS 3678 250', '100 mm')"
-            )
-        if self.plate.width is None:
-            raise InputError("plate.width: missing; the lug needs it, for example '100 mm'")
-        if in_mm(self.hole) < in_mm(self.pin):
-            raise InputError(
-                f"hole: got {in_mm(self.hole):g} mm; no less than the pin's"
-                f" {in_mm(self.pin):g} mm is due"
-            )
+        example = "Gusset('16 mm', 'AS/NZS 3678 250', '100 mm')"
+        plain_plate("the lug", self.plate, example, hung=True)
+        pin, hole = in_mm(self.pin), in_mm(self.hole)
+        if hole < pin:
+            raise InputError(f"hole: got {hole:g} mm; no less than the pin's {pin:g} mm is due")
+        holds_hole("plate_edge_beyond", in_mm(self.plate_edge_beyond), hole / 2)
+        holds_hole("plate.width", in_mm(self.plate.width), hole)
+        self._sleeve()
+        if not isinstance(self.bracing, bool):
+            raise InputError(f"bracing: got {self.bracing!r}; True or False is due")
+        self._factor()
+
+    def _sleeve(self) -> None:
+        """The three fields of a sleeve: due for one, refused without."""
         sleeve = self.coupling == "sleeve"
+        for name in ("sleeve_diameter", "engagement"):
+            if not sleeve and getattr(self, name) is not None:
+                raise InputError(f"{name}: given without a sleeve; it needs coupling='sleeve'")
         self._length("sleeve_diameter", example="50 mm", due=sleeve)
         self._length("engagement", example="30 mm", due=sleeve)
         if not isinstance(self.sleeve_steel, str) or sleeve != bool(self.sleeve_steel):
@@ -95,6 +112,7 @@ class Threaded(Stated):
                 else "sleeve_steel: given without a sleeve; it needs coupling='sleeve'"
             )
         if sleeve and in_mm(self.sleeve_diameter) <= SIZES[self.thread].d_f:
-            raise InputError("sleeve_diameter: it is to be greater than the thread's")
-        if not isinstance(self.bracing, bool):
-            raise InputError(f"bracing: got {self.bracing!r}; True or False is due")
+            raise InputError(
+                f"sleeve_diameter: got {in_mm(self.sleeve_diameter):g} mm; more than the thread's"
+                f" {SIZES[self.thread].d_f:g} mm is due"
+            )

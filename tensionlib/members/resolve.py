@@ -27,9 +27,10 @@ from tensionlib.standards import Standard
 from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
 from tensionlib.steel.bolts import SIZES
 from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
+from tensionlib.steel.sections import DENSITY
 
 _STATED = "given"
-GRAVITY = 9.81e-3  # N for a kg/m of mass on a mm of length
+GRAVITY = 9.81  # m/s²
 _COUNTED = "from the connection"
 
 
@@ -85,8 +86,9 @@ def _bending(member: Member, beside: Across) -> Inputs:
     numbers["L_b"] = Number(in_mm(span), _STATED)
     load = in_mm(beside.load)
     if beside.self_weight or load:
-        weight = section.mass * GRAVITY if beside.self_weight else 0.0
-        origin = f"{section.mass:.4g} kg/m at 9.81 m/s²" if beside.self_weight else "left out"
+        mass = section.A * DENSITY
+        weight = mass * GRAVITY if beside.self_weight else 0.0
+        origin = f"{mass * 1e3:.4g} kg/m at 9.81 m/s²" if beside.self_weight else "left out"
         numbers |= {
             "w_g": Number(weight, origin),
             "gamma_g": Number(beside.weight_factor, _STATED),

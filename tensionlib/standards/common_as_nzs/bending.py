@@ -150,7 +150,10 @@ def straightening(E: Any, I_sag: Any, L_b: Any) -> Any:
 
 @formula("Delta_s", BENT, title="sag in service, steadied by the tension", known=STATICS)
 def sag_under_tension(Delta_0: Any, N_star_ser: Any, N_E: Any) -> Any:
-    """Sag with the first term of its series in the tension, within 1 % [length]. Statics."""
+    """Sag with the first term of its series in the tension [length]. Statics.
+
+    Never less than the exact sag, and no more than 3 % above it (5π²/48 where tension is all).
+    """
     return Delta_0 / (1 + N_star_ser / N_E)
 
 

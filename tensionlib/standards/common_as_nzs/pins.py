@@ -8,7 +8,7 @@ from __future__ import annotations
 
 from typing import Any
 
-from tensionlib.calculation.dispatch import maximum, square
+from tensionlib.calculation.dispatch import maximum, sqrt, square
 from tensionlib.calculation.formula import formula
 from tensionlib.calculation.symbols import Notation, Symbol
 from tensionlib.quantities import AREA, COUNT, FACTOR, FORCE, LENGTH, MODULUS, MOMENT, STRESS
@@ -43,6 +43,8 @@ PINS = Notation(
         Symbol("t_4", "t_{\\min}", LENGTH, "least thickness beside the hole"),
         Symbol("A_req", "A_{\\mathrm{req}}", AREA, "net area required for the member"),
         Symbol("A_133", "A_{1.33}", AREA, "area required across the hole"),
+        Symbol("e_45", "e_{45}", LENGTH, "centre of the hole to the side, at 45° to the force"),
+        Symbol("r_b", "r_{b}", LENGTH, "least distance beyond the hole, from its centre"),
         Symbol("A_bey", "A_{b}", AREA, "net area beyond the hole"),
         Symbol("A_acr", "A_{a}", AREA, "net area across the hole"),
         Symbol("V_ppin", "V_{b,pin}", FORCE, "nominal capacity of the ply at the pin"),
@@ -129,10 +131,20 @@ def required_across(A_req: Any) -> Any:
     return 1.33 * A_req
 
 
+@formula("e_45", PINS, title="to the side edge, at 45° to the force", clause="7.5")
+def side_at_45(w_e: Any) -> Any:
+    """Centre of the hole to the plate's side on a line at 45° to the force [length]. 7.5, statics.
+
+    A line nearer to the force's own reaches the side further off: of a square end, the least
+    distance within 45° of the force is this one or the one straight to the end.
+    """
+    return w_e / sqrt(2)
+
+
 @formula("A_bey", PINS, title="net area beyond the hole", clause="7.5")
-def area_beyond(n_f: Any, e_e: Any, d_hp: Any, t: Any) -> Any:
-    """Net area beyond the hole along the member, all plates [area]. 7.5."""
-    return n_f * (e_e - d_hp / 2) * t
+def area_beyond(n_f: Any, r_b: Any, d_hp: Any, t: Any) -> Any:
+    """Least net area beyond the hole within 45° of the force, all plates [area]. 7.5."""
+    return n_f * (r_b - d_hp / 2) * t
 
 
 @formula("A_acr", PINS, title="net area across the hole", clause="7.5")

@@ -27,6 +27,9 @@ RODS = Notation(
         Symbol("d_sl", "d_{sl}", LENGTH, "outside diameter of the sleeve"),
         Symbol("A_sl", "A_{sl}", AREA, "ring area of the sleeve"),
         Symbol("phiN_sl", r"\phi N_{sl}", FORCE, "design capacity of the sleeve", "φN_sl"),
+        Symbol(
+            "phiN_slu", r"\phi N_{sl,u}", FORCE, "design capacity of the sleeve, fracture", "φN_slu"
+        ),
         Symbol("l_en", "l_{en}", LENGTH, "thread in the sleeve, each side"),
     ],
 )
@@ -54,3 +57,9 @@ def sleeve_area(d_sl: Any, d_th: Any) -> Any:
 def sleeve_capacity(phi: Any, A_sl: Any, f_y: Any) -> Any:
     """Design capacity of a sleeve in yielding [force]. 7.2."""
     return phi * A_sl * f_y
+
+
+@formula("phiN_slu", RODS, title="design capacity of the sleeve in fracture", clause="7.2")
+def sleeve_fracture(phi: Any, A_sl: Any, f_u: Any) -> Any:
+    """Design capacity of a sleeve in fracture of its ring [force]. 7.2."""
+    return phi * 0.85 * A_sl * f_u

@@ -61,14 +61,18 @@ class Rules:
 
 
 NOT_CHECKED = (
-    "the members and supports the gussets are fixed to, and the gussets' own fixing to them",
-    "block shear of any block but those shown; to the gusset's side edge only where it is stated",
+    "the members and supports the gussets are fixed to; the gussets' own fixing, unless the weld to"
+    " the support or the hanger is stated",
+    "block shear of a regular pattern in any block but those shown; to the gusset's side edge only"
+    " where it is stated",
     "shear of a tube's or an element's own wall beside its welds",
-    "compression, when the force reverses, in the member and the gussets",
-    "bending from self-weight, lateral load or eccentricity the correction factor does not cover",
-    "earthquake: member category, overstrength of the brace and the detailing that follows from it",
-    "bolt tension, prying, and slip at serviceability",
+    "compression in the member when the force reverses; in the gusset, unless it is stated there",
+    "bending from self-weight, lateral load or eccentricity the correction factor does not cover,"
+    " unless loads across the member are stated",
+    "earthquake, unless the brace's overstrength is stated; the detailing that its category asks"
+    " for in any case",
+    "bolt tension and prying, unless a hanger is stated; slip of bolts that are not friction bolts",
     "fatigue, brittle fracture, fire, corrosion and durability",
-    "stretch, sag and vibration",
-    "erection, access for tools and tolerance of the fabricated work",
+    "vibration; stretch and sag beyond what is printed",
+    "erection, access for tools beyond what is printed, and tolerance of the fabricated work",
 )

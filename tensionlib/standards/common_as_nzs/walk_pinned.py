@@ -15,7 +15,10 @@ def _take(work: Working, inputs: Inputs, name: str) -> Entry:
 
 
 def eye_net_area(work: Working, end: Inputs) -> Entry:
-    """Net area of the eye across its hole."""
+    """Net area of the eye across its hole.
+
+    Takes t and d_hp of the end and w_e of its part "eye".
+    """
     (eye,) = end.parts["eye"]
     return work.step(
         pins.eye_net, _take(work, eye, "w_e"), _take(work, end, "d_hp"), end.take(work, "t")
@@ -25,7 +28,12 @@ def eye_net_area(work: Working, end: Inputs) -> Entry:
 def pinned_end(
     rules: Rules, work: Working, end: Inputs, N_c: Entry, f_y: Entry, f_u: Entry
 ) -> None:
-    """Write the checks of a pinned end for the design action on the connection."""
+    """Write the checks of a pinned end for the design action on the connection.
+
+    Takes of the end the numbers t, t_p, d_p, d_hp, f_ypin, n_sp, c_p, the choices "label",
+    "rotates" and "earthquake", the tables f_yp and f_up, and n_f, w_e, e_e of each of its parts
+    "eye" and "fork". `f_y` and `f_u` are the flat's.
+    """
     label = end.choice("label")
     t, t_p = end.take(work, "t"), end.take(work, "t_p")
     with work.part(label + "Pin"):
@@ -37,7 +45,8 @@ def pinned_end(
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
         pin_plate(rules, work, end, fork, N_c, t_p, f_yp, f_up)
     work.leaves_out(
-        "the fork plates beyond the pin's hole and their fixing; how the pin is kept in place"
+        "the fork plates away from the pin's hole and their fixing; how the pin is kept in place",
+        "the taper from the flat to an eye wider than it",
     )
 
 
@@ -75,7 +84,12 @@ def pin_plate(
     f_y: Entry,
     f_u: Entry,
 ) -> None:
-    """Bearing and tear-out at the pin, and the proportions of 7.5."""
+    """Bearing and tear-out at the pin, and the proportions of 7.5.
+
+    The net area that 7.5 asks for is the greater of what yielding and fracture of 7.2 need for the
+    design action on the connection: the conservative reading. Takes d_p and d_hp of the end and
+    n_f, w_e and e_e of the `plate`, whose end is square or rounded about the hole.
+    """
     d_p, d_hp, n_f = _take(work, end, "d_p"), _take(work, end, "d_hp"), _take(work, plate, "n_f")
     e_e, w_e = _take(work, plate, "e_e"), _take(work, plate, "w_e")
     phi = work.fixed("phi", rules.factors.ply, rules.factors.clause, note="ply in bearing at a pin")
@@ -95,7 +109,18 @@ def pin_plate(
     )
     phi_m = work.fixed("phi", rules.factors.member, rules.factors.clause, note="member in tension")
     A_req = work.step(pins.required_area, N_c, phi_m, f_y, f_u)
-    beyond = work.step(pins.area_beyond, n_f, e_e, d_hp, t)
+    r_b = work.least(
+        PINS["r_b"],
+        e_e,
+        work.step(pins.side_at_45, w_e),
+        title="least distance beyond the hole, within 45° of the force",
+        clause="7.5",
+    )
+    work.assume(
+        f"{end.choice('label')}plates end square beyond the pin, or rounded about the hole no"
+        " closer to its centre than their end"
+    )
+    beyond = work.step(pins.area_beyond, n_f, r_b, d_hp, t)
     work.check("area beyond the hole", A_req, beyond, "7.5")
     across = work.step(pins.area_across, n_f, w_s, t)
     work.check("area across the hole", work.step(pins.required_across, A_req), across, "7.5")

@@ -16,13 +16,19 @@ def _take(work: Working, end: Inputs, name: str) -> Entry:
 
 
 def thread_area(work: Working, end: Inputs) -> Entry:
-    """Net area of the rod: the tensile stress area of its thread."""
+    """Net area of the rod: the tensile stress area A_s of its thread, a number of the end."""
     work.note("The net area of a threaded rod is the tensile stress area of its thread.", "7.2")
     return end.take(work, "A_s")
 
 
 def rod_end(rules: Rules, work: Working, end: Inputs, N_c: Entry, f_u: Entry) -> None:
-    """Write the checks of a threaded rod's end for the design action on the connection."""
+    """Write the checks of a threaded rod's end for the design action on the connection.
+
+    Takes of the end the numbers A_s, R_f, t_p, d_p, d_hp and, with a sleeve, d_th; the choices
+    "label", "certified" and "earthquake"; the tables f_yp and f_up; n_f, w_e, e_e of its part
+    "fork", which is the lug; d_sl and l_en and the tables f_y and f_u of its part "sleeve", where
+    there is one. `f_u` is the rod's.
+    """
     label = end.choice("label")
     with work.part(label + "Rod and fittings"):
         phi = work.fixed("phi", rules.factors.bolt, rules.factors.clause, note="bolt in tension")
@@ -37,7 +43,9 @@ def rod_end(rules: Rules, work: Working, end: Inputs, N_c: Entry, f_u: Entry) ->
         f_yp, f_up = end.read(work, "f_yp", t_p), end.read(work, "f_up", t_p)
         (lug,) = end.parts["fork"]
         pin_plate(rules, work, end, lug, N_c, t_p, f_yp, f_up)
-    work.leaves_out("the lug beyond the pin's hole and its fixing; locking of threads and fittings")
+    work.leaves_out(
+        "the lug away from the pin's hole and its fixing; locking of threads and fittings"
+    )
 
 
 def _sleeve(rules: Rules, work: Working, end: Inputs, sleeve: Inputs, N_c: Entry) -> None:
@@ -46,6 +54,9 @@ def _sleeve(rules: Rules, work: Working, end: Inputs, sleeve: Inputs, N_c: Entry
     f_y = sleeve.read(work, "f_y", d_sl)
     area = work.step(rods.sleeve_area, d_sl, d_th)
     work.check("sleeve", N_c, work.step(rods.sleeve_capacity, phi, area, f_y), "7.2")
+    if "f_u" in sleeve.tables:
+        fracture = work.step(rods.sleeve_fracture, phi, area, sleeve.read(work, "f_u", d_sl))
+        work.check("sleeve, fracture", N_c, fracture, "7.2")
     work.check(
         "thread in the sleeve",
         d_th,

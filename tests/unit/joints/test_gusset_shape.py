@@ -102,6 +102,15 @@ def test_the_line_across_is_of_the_piece_the_joint_is_in():
     assert width.low == pytest.approx(-200 * TAN_30)
 
 
+def test_a_gusset_cut_off_from_its_fasteners_is_refused():
+    """Two bolts on either side of a wedge that runs in from the right, past the line between them:
+    no plate leads straight from the far one to the near one's row."""
+    corners = ((0, 0), (400, 0), (400, 100), (130, 165), (400, 210), (400, 300), (0, 300))
+    gusset = shape(corners, supported=(6,))
+    with pytest.raises(InputError, match="leaves no width for the force at u = 40 mm"):
+        gusset.width([(40.0, 10.0), (250.0, 60.0), (250.0, -60.0)], 40.0)
+
+
 def test_a_clipped_corner_cuts_the_line_across():
     """The upper left corner cut off from (0, 200) to (100, 300) in the gusset's axes, the member's
     end at (20, 150): the line at u = 0 meets the cut at v = 70, and 200·tan 30° is 115.5. The
@@ -144,17 +153,13 @@ def test_a_member_at_45_degrees_in_the_corner_of_beam_and_column():
     assert gusset.ray(0.0, 0.0, 1.0, 0.0).distance == pytest.approx(240 * math.sqrt(2))
 
 
-def test_a_ray_goes_on_past_a_corner_it_only_touches():
-    """A notch whose tip is on the line v = 0 at u = 100, and one a hair below and above it."""
-    for tip, distance in ((100, 300.0), (99, 300.0), (101, None)):
-        gusset = shape(
-            ((0, 0), (150, 0), (200, tip), (250, 0), (400, 0), (400, 300), (0, 300)),
-            supported=(6,),
-            at=(100, 100),
-        )
-        reach = gusset.ray(0.0, 0.0, 1.0, 0.0).distance
-        # 101: the left flank, from (150, 0) to (200, 101), is at y = 100 where x = 150 + 50·100/101.
-        assert reach == pytest.approx(50 + 5000 / 101 if distance is None else distance)
+# A notch whose tip is below the line v = 0, on it, and over it: there its left flank, from
+# (150, 0) to (200, 101), is at y = 100 where x = 150 + 50·100/101.
+@pytest.mark.parametrize(("tip", "distance"), [(99, 300.0), (100, 300.0), (101, 50 + 5000 / 101)])
+def test_a_ray_goes_on_past_a_corner_it_only_touches(tip, distance):
+    corners = ((0, 0), (150, 0), (200, tip), (250, 0), (400, 0), (400, 300), (0, 300))
+    gusset = shape(corners, supported=(6,), at=(100, 100))
+    assert gusset.ray(0.0, 0.0, 1.0, 0.0).distance == pytest.approx(distance)
 
 
 def test_a_ray_that_leaves_in_the_corner_of_a_support_leaves_through_the_free_edge():
@@ -172,7 +177,8 @@ def test_a_ray_from_an_edge_goes_into_the_gusset_or_nowhere():
 
 
 def test_edges_that_go_straight_on_are_one_free_edge():
-    """The lower edge in three pieces, the first corner in the middle of it; then its middle held."""
+    """The lower edge in three pieces, the corners counted from the middle of it; then its middle
+    piece held."""
     corners = ((150, 0), (250, 0), (400, 0), (400, 300), (0, 300), (0, 0))
     whole = dict(shape(corners, supported=(4,)).free_edges())
     assert whole == pytest.approx({5: 400.0, 2: 300.0, 3: 400.0})
