@@ -29,7 +29,7 @@ from tensionlib.joints.scene import (
 )
 
 SHEET = 160.0
-_WIDE, _TALL = 112.0, 84.0
+_WIDE, _TALL = 112.0, 58.0
 _LEFT, _TOP = 34.0, 15.0
 _HATCH = 2.4
 
