@@ -8,7 +8,7 @@ import math
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass, replace
 from functools import cached_property
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 from tensionlib.calculation.sheet import (
     CheckKind,
@@ -23,6 +23,9 @@ from tensionlib.calculation.symbols import Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
 from tensionlib.quantities import METRIC, Quantity, View, format_utilisation, quantity
+
+if TYPE_CHECKING:
+    from tensionlib.calculation.readings.detailing import DetailingReport
 
 
 @dataclass(frozen=True, slots=True)
@@ -288,6 +291,12 @@ class Calculation:
         from tensionlib.calculation.readings import html
 
         return html.of(self.record())
+
+    def detailing(self) -> DetailingReport:
+        """The detailing report: pitch, edges, welds, laps, bolts as bought, room for the wrench."""
+        from tensionlib.calculation.readings import detailing
+
+        return detailing.DetailingReport(detailing.rows_of(self.record()))
 
     def _repr_mimebundle_(self, include: Any = None, exclude: Any = None) -> dict[str, Any]:
         from tensionlib.calculation.readings import bundle

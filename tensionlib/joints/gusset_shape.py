@@ -207,7 +207,7 @@ class GussetShape:
             line = self.ray(u_last, middle, 0.0, sign)
             found = [(middle + sign * line.distance, line.edge)]
             for i in range(len(self.outline)):
-                depth = _least_depth(*self.edge(i), start, u_last, sign)
+                depth = _least_depth(*self.edge(i), start, (u_last, middle), sign)
                 if depth is not None:
                     found.append((start[1] + sign * depth, i))
             at, edge = min(found, key=lambda each: sign * each[0])
@@ -227,10 +227,7 @@ class GussetShape:
         """Along the member back to the support from the low end, the middle and the high end of
         the width; None where a free edge comes first."""
         ends = (width.low, (width.low + width.high) / 2, width.high)
-        # A hair inside, so that an end on the outline sees the gusset and not the edge it is on.
-        inset = min(1e-6, width.width / 4)
-        places = (ends[0] + inset, ends[1], ends[2] - inset)
-        hits = [self.ray(u_last, v, -1.0, 0.0) for v in places]
+        hits = [self.ray(u_last, v, -1.0, 0.0) for v in ends]
         first, second, third = (
             hit.distance if hit.edge in self.supported else None for hit in hits
         )
@@ -329,16 +326,23 @@ def _bounds(starts: Sequence[Point], u_last: float) -> Point:
     return low, high
 
 
-def _least_depth(a: Point, b: Point, start: Point, u_last: float, sign: float) -> float | None:
-    """How near to the line along the force through `start` an edge comes inside the spread from
-    `start` to u = `u_last`, on the side of `sign`; None where it stays outside."""
+def _least_depth(a: Point, b: Point, start: Point, middle: Point, sign: float) -> float | None:
+    """How near to the line along the force through `start` an edge comes inside the spread on the
+    side of `sign`, from `start` to the line across through `middle`; None where it stays outside.
+
+    The spread lies between its ray and that line along the force; where the middle lies farther
+    out, between its ray and the way to the middle.
+    """
     # Coordinates in the spread: s back from the start, w out to the side; it is where
-    # 0 < w < s tan 30 and s < reach. What only touches it is outside.
-    reach = start[0] - u_last
+    # inner · s < w < s tan 30 and s < reach. What only touches it is outside.
+    reach = start[0] - middle[0]
+    if reach < _SAME:
+        return None
+    inner = max(sign * (middle[1] - start[1]) / reach, 0.0)
     (s_1, w_1), (s_2, w_2) = ((start[0] - u, sign * (v - start[1])) for u, v in (a, b))
     begin, finish = 0.0, 1.0
     for at_1, at_2 in (
-        (w_1, w_2),
+        (w_1 - inner * s_1, w_2 - inner * s_2),
         (s_1 * _TAN_30 - w_1 - _SAME, s_2 * _TAN_30 - w_2 - _SAME),
         (reach - s_1 - _SAME, reach - s_2 - _SAME),
     ):
@@ -397,7 +401,5 @@ def _meet(one: tuple[Point, Point], other: tuple[Point, Point]) -> bool:
     free = [(p, *other) for p in one if p not in other] + [(p, *one) for p in other if p not in one]
     if any(_apart(*each) < _SAME for each in free):
         return True
-    if len(free) < 4:
-        return False
     (p, q), (r, s) = one, other
     return side(p, q, r) * side(p, q, s) < 0 and side(r, s, p) * side(r, s, q) < 0

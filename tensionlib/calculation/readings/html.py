@@ -143,6 +143,11 @@ def _terms(latex: str) -> list[str]:
     return [*terms, latex[start:]]
 
 
+def table_of_checks(record: Record) -> str:
+    """The checks alone, with the style they are shown in."""
+    return f"<style>{style()}</style>" + f'<div class="tl-calc">{_checks(record)}</div>'
+
+
 def _checks(record: Record) -> str:
     rows = [
         [

@@ -160,6 +160,7 @@ SYMBOLS = (
     Symbol("e_lim", r"e_{\lim}", LENGTH, "limit of the clause on edge distance"),
     Symbol("t_wmin", r"t_{w,\min}", LENGTH, "least leg size"),
     Symbol("t_wmax", r"t_{w,\max}", LENGTH, "greatest leg size along an edge"),
+    Symbol("l_5", "l_{5}", LENGTH, "five times the thinner of the parts joined"),
     Symbol("l_4", "l_{4}", LENGTH, "least length of a fillet weld"),
     # Any pattern of holes
     Symbol("t_s", "t_{s}", LENGTH, "least thickness that a step of the chain crosses"),

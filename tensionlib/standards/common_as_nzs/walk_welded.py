@@ -20,6 +20,8 @@ LEGS = ThresholdTable(
 )
 WIDTH = Symbol("b_r", "b_{r}", LENGTH, "width across the force from outer run to outer run")
 LARGEST = Symbol("t_w2", "t_{w2}", LENGTH, "largest leg size of the runs")
+LAP = Symbol("l_lap", r"l_{\mathrm{lap}}", LENGTH, "least lap of the parts")
+LEAST_LAP = Symbol("l_lap0", r"l_{\mathrm{lap},0}", LENGTH, "shortest lap of any parts")
 SHORTEST = Symbol("l_r", "l_{r}", LENGTH, "shortest run of weld")
 LAP_CLAUSE = "Table 9.7.3.10(2)"
 
@@ -165,6 +167,23 @@ def _limits(work: Working, end: Inputs) -> None:
     work.check("least weld length", shortest, least_run, "9.7.3.5", kind="detailing")
     if runs:
         return
+    if end.choice("to") not in ("slot", "bar"):
+        t_thin = work.least("t_thin", t, t_p, title="thinner of the parts joined")
+        lap = work.greatest(
+            LAP,
+            work.step(welds.five_plies, t_thin),
+            work.fixed(LEAST_LAP, welds.SHORTEST_LAP, "practice", note="no lap is shorter"),
+            title="least lap",
+            clause="practice",
+        )
+        work.check(
+            "lap",
+            lap,
+            shorter_run(work, end),
+            "practice",
+            kind="advice",
+            note="AISC 360-16 J2.2b, from memory; returns round the ends do not count",
+        )
     if not end.has("l_t") and end.choice("to") not in ("slot", "bar"):
         work.check(
             "weld length over the width between runs",

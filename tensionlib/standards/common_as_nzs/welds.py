@@ -76,6 +76,21 @@ def design_fillet(phi: Any, v_w: Any, l_w: Any) -> Any:
     return phi * v_w * l_w
 
 
+SHORTEST_LAP = 25.0  # mm; AISC 360-16 J2.2b, from memory
+
+
+@formula(
+    "l_5",
+    COMMON,
+    title="five times the thinner part",
+    clause="practice",
+    known="AISC 360-16 J2.2b, from memory; advice",
+)
+def five_plies(t_thin: Any) -> Any:
+    """Least lap of two parts by the thinner one [length]. Advice."""
+    return 5 * t_thin
+
+
 # Eccentric groups of fillets, by elastic vectors -----------------------------------------
 
 STATICS = "statics"

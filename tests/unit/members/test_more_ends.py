@@ -309,3 +309,32 @@ def test_a_bracing_rod_with_a_turnbuckle_is_connected_for_its_own_capacity():
     hanging = tl.design(member("24 RB", end.but(bracing=False)), "40 kN")
     assert hanging.value("N_star_c").internal == pytest.approx(max(40e3, 0.3 * own))
     assert calc["Rod and fittings", "fork and turnbuckle"].note.startswith("certified: the maker")
+
+
+# The detailing report ---------------------------------------------------------------------
+
+
+def test_the_detailing_report_holds_every_limit_and_no_strength():
+    calc = tl.design(member(end=bolted()), "250 kN")
+    report = calc.detailing()
+    names = {(row["part"], row["name"]) for row in report.record["checks"]}
+    assert ("Bolt distances", "least pitch") in names
+    assert ("Bolts as bought", "socket clear of the other leg") in names
+    assert ("Bolts", "bolt shear") not in names
+    assert report.passes
+    assert "common practice" in str(report)
+    assert "9.6.1" in str(report)
+    assert "<table" in report._repr_html_()
+    short = tl.design(member(end=bolted(end_distance="30 mm")), "250 kN")
+    assert not short.detailing().passes
+
+
+def test_a_lap_is_five_of_the_thinner_part_and_25_mm_at_least():
+    """9.5 mm leg on 12 mm: 47.5 mm; a 4 mm gusset: 25 mm."""
+    from tests.builders import welded
+
+    calc = tl.design(member(end=welded()), "100 kN")
+    assert calc["lap"].demand.internal == pytest.approx(47.5)
+    assert calc["lap"].capacity.internal == 150.0
+    thin = tl.design(member(end=welded(plate=gusset(thickness="4 mm"))), "100 kN")
+    assert thin["lap"].demand.internal == 25.0
