@@ -137,14 +137,15 @@ def test_the_width_is_what_is_left_of_the_spread(drawn):
         reach = middle + sign * first_stretch(polygon, (u_last, middle), end)
         expected = sign * min(sign * limit, sign * reach)
         if u > u_last:
-            spread = shapely.Polygon([(u, v), (u_last, v), (u_last, limit)])
+            inner = max(sign * v, sign * middle) * sign
+            spread = shapely.Polygon([(u, v), (u_last, inner), (u_last, limit)])
             lost = shapely.difference(spread, polygon)
             for piece in lost.geoms if hasattr(lost, "geoms") else [lost]:
                 if piece.area > 1e-6:
-                    nearest = min(sign * (y - v) for _, y in shapely.get_coordinates(piece))
-                    expected = sign * min(sign * expected, sign * v + nearest)
+                    nearest = min(sign * y for _, y in shapely.get_coordinates(piece))
+                    expected = sign * min(sign * expected, nearest)
         ends.append(expected)
-    event(f"{(ends[0] > low + 0.01) + (ends[1] < high - 0.01)} sides cut")
+    event(f"{sum(map(int, (ends[0] > low + 0.01, ends[1] < high - 0.01)))} sides cut")
     width = width_or_none(built(corners, supported), starts, u_last)
     if width is None:
         assert ends[1] - ends[0] < 1e-2
@@ -162,7 +163,8 @@ def width_or_none(shape, starts, u_last):
     try:
         return shape.width(starts, u_last)
     except InputError as error:
-        assert "leaves no width for the force" in str(error)
+        if "leaves no width for the force" not in str(error):
+            raise
         event("no width left")
         return None
 
@@ -265,6 +267,7 @@ def test_strips_end_on_a_support_with_plate_all_the_way(drawn):
     assume(width is not None and width.width > 1e-3)
     held = [shapely.LineString(shape.edge(i)) for i in supported]
     free = [shapely.LineString(shape.edge(i)) for i in range(len(corners)) if i not in supported]
+    # A hair inside, for the other library to see the point on the gusset.
     inset = 1e-6
     places_of = (width.low + inset, (width.low + width.high) / 2, width.high - inset)
     for v, strip in zip(places_of, shape.strips(u_last, width), strict=True):

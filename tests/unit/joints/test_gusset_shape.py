@@ -102,13 +102,33 @@ def test_the_line_across_is_of_the_piece_the_joint_is_in():
     assert width.low == pytest.approx(-200 * TAN_30)
 
 
-def test_a_gusset_cut_off_from_its_fasteners_is_refused():
-    """Two bolts on either side of a wedge that runs in from the right, past the line between them:
-    no plate leads straight from the far one to the near one's row."""
-    corners = ((0, 0), (400, 0), (400, 100), (130, 165), (400, 210), (400, 300), (0, 300))
-    gusset = shape(corners, supported=(6,))
-    with pytest.raises(InputError, match="leaves no width for the force at u = 40 mm"):
-        gusset.width([(40.0, 10.0), (250.0, 60.0), (250.0, -60.0)], 40.0)
+def test_a_slot_for_a_bar_takes_nothing_from_the_spread():
+    """A slot 24 wide from the right to u = 20, between two lines of weld 30 either side of it: the
+    force spreads outwards from them, the slot is between."""
+    slot = ((400, 138), (120, 138), (120, 162), (400, 162))
+    gusset = shape(((0, 0), (400, 0), *slot, (400, 300), (0, 300)), supported=(7,))
+    width = gusset.width([(0.0, -30.0), (0.0, 30.0), (180.0, -30.0), (180.0, 30.0)], 0.0)
+    assert width.width == pytest.approx(60 + 2 * 180 * TAN_30)
+    assert (width.cut_low, width.cut_high) == ("", "")
+
+
+def test_a_bolt_whose_line_leaves_the_plate_spreads_towards_the_joint():
+    """Bolts at (0, 20) and (100, 50) under an edge that rises from v = 25 at u = 0 to v = 60 at
+    u = 100: the plate ends at 25 on the line across; the lower side is the far bolt's, whole."""
+    gusset = shape(((0, 0), (400, 0), (400, 280), (0, 140)), supported=(3,))
+    width = gusset.width([(0.0, 20.0), (100.0, 50.0)], 0.0)
+    assert (width.low, width.high) == pytest.approx((50 - 100 * TAN_30, 25.0))
+    assert (width.cut_low, width.cut_high) == ("", "free edge")
+
+
+def test_a_far_bolt_cut_off_from_the_joint_is_refused():
+    """Bolts at (0, 0) and (200, 40), which governs both sides. A wedge comes down between them to
+    (100, -10) and leaves the lower side only what is above v = 20.6, where its right flank, from
+    there to (115, 150), meets the way to the middle, v = u/5; the plate at u = 0 ends at 15."""
+    wedge = ((215, 300), (200, 140), (185, 165))
+    gusset = shape(((0, 0), (400, 0), (400, 300), *wedge, (0, 165)), supported=(6,))
+    with pytest.raises(InputError, match="leaves no width for the force at u = 0 mm"):
+        gusset.width([(0.0, 0.0), (200.0, 40.0)], 0.0)
 
 
 def test_a_clipped_corner_cuts_the_line_across():
@@ -224,6 +244,14 @@ def test_strips_run_back_to_the_support_or_to_nothing():
     gusset = shape(RECTANGLE)
     width = gusset.width([(40.0, 0.0), (180.0, 0.0)], 40.0)
     assert gusset.strips(40.0, width) == pytest.approx((140.0, 140.0, 140.0))
+    # The spread cut by the lower edge: that end of it runs along the edge to the support.
+    low = shape(RECTANGLE, at=(100, 60))
+    cut = low.width([(40.0, 0.0), (180.0, 0.0)], 40.0)
+    assert low.strips(40.0, cut) == pytest.approx((140.0, 140.0, 140.0))
+    # The lower half of the left edge held only: no support behind the upper end.
+    half = shape((*RECTANGLE, (0, 150)), supported=(4,), at=(100, 120))
+    spread = half.width([(40.0, 0.0), (180.0, 0.0)], 40.0)
+    assert half.strips(40.0, spread) == (pytest.approx(140.0), pytest.approx(140.0), None)
     free = shape(RECTANGLE, supported=(1,))
     assert free.strips(40.0, width) == (None, None, None)
 

@@ -166,6 +166,19 @@ def test_a_reamed_hole():
     assert near(calc[BLOCK].capacity, block(180, 59, 90, 11))
 
 
+def test_the_worst_of_bolts_that_press_askew():
+    """Two lines at 80 and 125 mm, 40 and 100 mm from the end; the force at 49.110 mm.
+
+    e = 102.5 - 49.110 = 53.390, I_b = 4·(30² + 22.5²) = 5625. Shares along 0.25 ± 53.39·22.5/5625
+    = 0.46356 and 0.03644, across 53.39·30/5625 = 0.28475. Bolt 1 presses with 0.54404 to the end,
+    29/(0.46356/0.54404) = 34.034 away: 0.54404/44.034 = 0.01236. Bolt 3 with 0.28707 to the toe,
+    14/(0.28475/0.28707) = 14.114: 0.28707/24.114 = 0.01190, so bolt 1 is the worst.
+    """
+    calc = design(Pattern.lines(2, ["80 mm", "125 mm"], "40 mm", "60 mm"), share="elastic")
+    assert calc[TEAR].demand.internal == pytest.approx(0.54404 * 300e3, rel=1e-4)
+    assert calc[TEAR].capacity.internal == pytest.approx(tear_out(34.034), rel=1e-4)
+
+
 def test_the_end_cut_10_mm_short():
     calc = design(LINE.end_cut("10 mm"))
     assert near(calc[TEAR].capacity, tear_out(19))

@@ -95,6 +95,20 @@ def test_which_edges_a_block_may_tear_to(name, element, low, high, t):
     assert part.thickness(middle) == t
 
 
+def test_a_tee_has_a_free_tip_and_a_web_on_its_flange():
+    """y of the stem runs from its tip to the outer face of the flange."""
+    tee = tl.by_dimensions("tee", d="150 mm", b_f="165 mm", t_f="10 mm", t_w="6 mm", r1="0 mm")
+    stem, flange = element_part(tee, "web"), element_part(tee, "flange")
+    assert (stem.width, stem.to_low(40.0, 60.0), stem.to_high(40.0, 60.0)) == (
+        150.0,
+        60.0,
+        math.inf,
+    )
+    assert (flange.to_low(40.0, 60.0), flange.to_high(40.0, 60.0)) == (60.0, 105.0)
+    assert flange.thickness_between(60.0, 105.0) > 1e5
+    assert opened(tee).elements == ("flange", "web")
+
+
 def test_a_web_stands_on_the_flange_of_an_i():
     part = element_part(section("310UB40.4"), "flange 1")
     assert part.thickness_between(37.5, 127.5) > 1e5

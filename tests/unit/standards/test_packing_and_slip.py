@@ -138,6 +138,13 @@ def test_slip_without_a_force_in_service_is_not_covered(end):
 
 
 @BOTH
+def test_slip_of_a_size_whose_tension_is_not_known_is_not_covered(end):
+    calc = design(end(bolts="M22 8.8/TF"), service="50 kN")
+    assert [line.title for line in calc.not_covered] == ["slip"]
+    assert "tension of this bolt as installed is not known" in calc.not_covered[0].note
+
+
+@BOTH
 @pytest.mark.parametrize("category", ["S", "TB"])
 def test_bolts_that_bear_have_no_slip_check(end, category):
     calc = design(end(bolts=f"M20 8.8/{category}"), service="900 kN")
