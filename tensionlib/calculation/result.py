@@ -13,16 +13,18 @@ from typing import TYPE_CHECKING, Any
 from tensionlib.calculation.sheet import (
     CheckKind,
     CheckLine,
+    Extreme,
     Given,
     Line,
     NotCovered,
     Sheet,
+    Step,
     passes,
 )
 from tensionlib.calculation.symbols import Source
 from tensionlib.calculation.working import Working
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
-from tensionlib.quantities import METRIC, Quantity, View, format_utilisation, quantity
+from tensionlib.quantities import FORCE, METRIC, Quantity, View, format_utilisation, quantity
 
 if TYPE_CHECKING:
     from tensionlib.calculation.readings.detailing import DetailingReport
@@ -165,17 +167,65 @@ class Calculation:
 
     @property
     def capacity(self) -> Quantity:
-        """The least design capacity over the strength checks on a force.
+        """The greatest design force that every strength check allows.
+
+        A check of the force itself, or of the design action on the connection, allows its own
+        capacity. One whose demand grows in proportion to it, as the force on one bolt or the
+        stress on a weld, allows so much more or less of it. Checks of another action (a reversal,
+        a force in service) and sums of several ratios (tension with bending) have no such force
+        and are left out: a force below this one may still fail them.
 
         Raises
         ------
         DataNotFoundError
             When the calculation has no such check.
         """
-        forces = [c.capacity for c in self.checks if c.kind == "strength"]
-        if not forces:
+        allowed = [
+            force
+            for check, (_, line) in zip(self.checks, self._lines(CheckLine), strict=True)
+            if check.kind == "strength" and (force := self._allowed(line)) is not None
+        ]
+        if not allowed:
             raise DataNotFoundError(f"{self.heading.mark}: no strength check, so no capacity")
-        return min(forces, key=lambda capacity: capacity.internal)
+        return quantity(min(allowed), FORCE, self.view)
+
+    def _allowed(self, line: CheckLine) -> float | None:
+        """The design force at which a check would be used up; None where it has none."""
+        demand = self.sheet.lines[line.demand].symbol
+        assert demand is not None
+        capacity = self.values[line.capacity]
+        bases = self._actions
+        if not bases:
+            return capacity if demand.role == FORCE else None
+        if line.demand in bases:
+            return float(capacity)
+        ancestors = self._ancestors(line.demand)
+        base = max((b for b in bases if b in ancestors), default=None)
+        # A pure number is a sum of ratios, which does not grow in proportion.
+        if base is None or demand.role.dimensionless or not self.values[line.demand] > 0.0:
+            return None
+        return float(capacity * self.values[base] / self.values[line.demand])
+
+    @cached_property
+    def _actions(self) -> tuple[int, ...]:
+        """The line of the design force, and those that take the greatest of it and others."""
+        force = self.heading.force
+        if force is None:
+            return ()
+        greater = [i for i, line in self._lines(Extreme) if not line.least and force in line.args]
+        return (force, *greater)
+
+    def _ancestors(self, index: int) -> set[int]:
+        """Every line that a line is worked out from, itself with them."""
+        found, waiting = set(), [index]
+        while waiting:
+            i = waiting.pop()
+            if i not in found:
+                found.add(i)
+                line = self.sheet.lines[i]
+                if isinstance(line, Step | Extreme):
+                    waiting += line.args
+        return found
 
     @property
     def utilisation(self) -> float:

@@ -95,6 +95,15 @@ class Gusset(Stated):
             )
 
 
+def check_plate(plate: object) -> None:
+    """Refuse what is no gusset. Raises InputError naming what is due."""
+    if type(plate) is not Gusset:
+        raise InputError(
+            f"plate: got {plate!r}; a Gusset is due, for example"
+            " Gusset('12 mm', 'AS/NZS 3678 250') (cover plates go with a BoltedPattern)"
+        )
+
+
 @dataclass(frozen=True)
 class Bolted(Stated):
     """A bolted end: one or two lines of bolts through one element of the section.
@@ -171,11 +180,7 @@ class Bolted(Stated):
         choice("edge_kind", self.edge_kind, EDGES)
         if not isinstance(self.bolts, str):
             raise InputError(f"bolts: got {self.bolts!r}; name them, for example 'M20 8.8/S'")
-        if not isinstance(self.plate, Gusset):
-            raise InputError(
-                f"plate: got {self.plate!r}; a Gusset is due, for example"
-                " Gusset('12 mm', 'AS/NZS 3678 250')"
-            )
+        check_plate(self.plate)
         object.__setattr__(self, "per_line", count("per_line", self.per_line, at_least=1))
         object.__setattr__(self, "lines", count("lines", self.lines, at_least=1))
         if self.lines > 2:
@@ -263,11 +268,7 @@ class Welded(Stated):
         choice("quality", self.quality, QUALITIES)
         if not isinstance(self.metal, str):
             raise InputError(f"metal: got {self.metal!r}; name it, for example 'E48XX'")
-        if not isinstance(self.plate, Gusset):
-            raise InputError(
-                f"plate: got {self.plate!r}; a Gusset is due, for example"
-                " Gusset('12 mm', 'AS/NZS 3678 250')"
-            )
+        check_plate(self.plate)
         self._length("leg_size", example="6 mm", due=True)
         self._length("length_1", example="120 mm", due=True)
         if self.length_2 is None:

@@ -310,6 +310,10 @@ class GussetPart:
         hit = self.shape.ray(*self._end(x, y), du, dv)
         return math.inf if hit.edge in self.shape.supported else hit.distance
 
+    def edge_distance(self, x: float, y: float) -> float:
+        """Square to the nearest free edge, which may lie askew to the force."""
+        return self.shape.edge_distance(*self._end(x, y))
+
     def to_end(self, x: float, y: float) -> float:
         return self._to(x, y, 1.0, 0.0)
 

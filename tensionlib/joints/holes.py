@@ -53,6 +53,10 @@ class Hole:
         if not isinstance(self.mark, str) or not self.mark.strip():
             raise InputError(f"mark: got {self.mark!r}; a name is due, for example '3'")
         where = f"hole {self.mark}: "
+        if not isinstance(self.element, str):
+            raise InputError(f"{where}element: got {self.element!r}; its name is due, as 'web'")
+        if not isinstance(self.bolt, bool):
+            raise InputError(f"{where}bolt: got {self.bolt!r}; True or False is due")
         for name in ("x", "y"):
             value = door(where + name, getattr(self, name), LENGTH, above=0.0, example="60 mm")
             object.__setattr__(self, name, value)
@@ -119,23 +123,30 @@ class Pattern:
             How far each line stands back from the first, one entry a line; none for all in step.
         """
         number = count("per_line", per_line, at_least=1)
-        if isinstance(at, str) or not at:
+        start = count("first", first, at_least=0)
+        if not isinstance(at, list | tuple) or not at:
             raise InputError(f"at: got {at!r}; the place of each line, for example ['55 mm']")
+        if not isinstance(stagger, list | tuple):
+            raise InputError(f"stagger: got {stagger!r}; one length a line, or () for none")
         if number > 1 and pitch is None:
             raise InputError("pitch: missing; two or more holes a line need it, as '70 mm'")
         if stagger and len(stagger) != len(at):
             raise InputError(f"stagger: got {len(stagger)} entries; {len(at)}, one a line, are due")
         first_x = _by(end_distance, "end_distance")
-        step = 0.0 if pitch is None else _by(pitch, "pitch")
+        step = 0.0
+        if pitch is not None:
+            step = float(door("pitch", pitch, LENGTH, above=0.0, example="70 mm").internal)
         backs = [_by(back, "stagger") for back in stagger] or [0.0] * len(at)
         holes: list[Hole] = []
         for line, back in zip(at, backs, strict=True):
             for i in range(number):
                 x = quantity(first_x + back + i * step, LENGTH)
-                holes.append(Hole(str(first + len(holes)), x, line, element))
+                holes.append(Hole(str(start + len(holes)), x, line, element))
         return cls(tuple(holes))
 
     def __add__(self, other: Pattern) -> Pattern:
+        if not isinstance(other, Pattern):
+            raise InputError(f"holes: got {other!r}; a Pattern is added to a Pattern")
         return Pattern(self.holes + other.holes)
 
     # What was drilled ---------------------------------------------------------------------
@@ -166,7 +177,7 @@ class Pattern:
 
     def end_cut(self, by: Length) -> Pattern:
         """The member's end cut shorter by a length: every hole stands so much nearer to it."""
-        cut = _by(by, "by")
+        cut = float(door("by", by, LENGTH, at_least=0.0, example="6 mm").internal)
         return Pattern(tuple(replace(h, x=quantity(in_mm(h.x) - cut, LENGTH)) for h in self.holes))
 
     def _hole(self, mark: str) -> Hole:

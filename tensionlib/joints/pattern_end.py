@@ -113,18 +113,33 @@ class BoltedPattern(Stated):
         self._shear_planes()
         if not any(hole.bolt and self.at_gusset(hole.element) for hole in self.holes.holes):
             raise InputError(f"holes: no bolt goes through the {self.to}, which is on the gusset")
+        if self.to == "both flanges":
+            for flange in ("flange 1", "flange 2"):
+                if not any(h.bolt and h.element == flange for h in self.holes.holes):
+                    raise InputError(f"holes: no bolt goes through {flange}; to='both flanges'")
+        if self.credit_behind and self.share == "elastic":
+            raise InputError(
+                "credit_behind: it counts equal shares; give share='equal', or leave the credit out"
+            )
         self._factor()
 
     def at_gusset(self, element: str) -> bool:
-        """Whether an element named by a hole is the one on the gusset."""
-        return element in ("", self.to) or (
-            self.to == "both flanges" and element in ("flange 1", "flange 2")
-        )
+        """Whether an element named by a hole is the one on the gusset.
+
+        A leg of an equal angle may go by two names.
+        """
+        if self.to == "both flanges":
+            return element in ("flange 1", "flange 2")
+        return element == "" or _same_leg(element) == _same_leg(self.to)
 
     def with_holes(self, holes: Pattern) -> BoltedPattern:
         """The same end with another pattern, such as the one that was drilled."""
         changed: BoltedPattern = self.but(holes=holes)
         return changed
+
+
+def _same_leg(name: str) -> str:
+    return {"leg": "long leg", "other leg": "short leg"}.get(name, name)
 
 
 def as_pattern(end: Bolted, section: Section) -> BoltedPattern:

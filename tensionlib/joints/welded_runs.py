@@ -6,7 +6,7 @@ from dataclasses import dataclass
 from typing import ClassVar
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import BOLTED_TO, Gusset
+from tensionlib.joints.ends import BOLTED_TO, Gusset, check_plate
 from tensionlib.joints.fillet_group import Run, balanced_runs
 from tensionlib.joints.stated import QUALITIES, Length, Stated, choice, in_mm
 from tensionlib.quantities import LENGTH, Quantity, door, quantity
@@ -79,11 +79,7 @@ class WeldedRuns(Stated):
         choice("quality", self.quality, QUALITIES)
         if not isinstance(self.metal, str):
             raise InputError(f"metal: got {self.metal!r}; name it, for example 'E48XX'")
-        if not isinstance(self.plate, Gusset):
-            raise InputError(
-                f"plate: got {self.plate!r}; a Gusset is due, for example"
-                " Gusset('12 mm', 'AS/NZS 3678 250')"
-            )
+        check_plate(self.plate)
         if (
             not isinstance(self.runs, tuple)
             or not self.runs

@@ -23,8 +23,9 @@ class Across(Stated):
     Parameters
     ----------
     span : length, optional
-        Between supports across the load; the member's length unless given. For an inclined member
-        give its horizontal projection.
+        Between supports across the load, along the member; its length unless given. The loads are
+        those across the member for each of its length; for an inclined member the whole
+        self-weight is taken as across it, on the safe side.
     self_weight : bool
         Whether the member's own weight bends it about x.
     weight_factor : number

@@ -92,6 +92,11 @@ def seat(section: Section, end: End) -> Seat:
             f" {section.facing}"
         )
     _check_gap(section, end)
+    if section.shape.startswith("double") and getattr(end.plate, "number", 1) == 2:
+        raise InputError(
+            f"plate: two cover plates on {section.designation}; a pair is spliced by the one plate"
+            " in its gap: Covers(..., number=1)"
+        )
     element = {"both flanges": "flange", "slot": "wall", "bar": "plate", "rod": "plate"}.get(
         end.to, end.to
     )

@@ -14,7 +14,7 @@ from itertools import combinations
 
 from tensionlib.calculation.inputs import Inputs, Number
 from tensionlib.errors import InputError
-from tensionlib.joints.blocks import Block, least_block
+from tensionlib.joints.blocks import Block, Piece, least_block
 from tensionlib.joints.bolt_group import (
     BoltGroup,
     clear_distance,
@@ -124,6 +124,10 @@ class PatternGeometry:
             width, length = length, width
         return Opening(hole.mark, in_mm(hole.x), in_mm(hole.y), width, length, hole.bolt)
 
+    def hole_size(self, kind: str) -> tuple[float, float]:
+        """Width and length of a hole of a kind for this end's bolts, mm."""
+        return self._sizes(self.fastener.d_f, kind)
+
     def _check_backs(self, element: str, holes: Sequence[Opening]) -> None:
         """Refuse holes that run into the plate that stands on this one."""
         d = self.section.dims
@@ -194,7 +198,14 @@ class PatternGeometry:
         bolts = [hole for hole in holes if hole.bolt]
         last = max(b.x for b in bolts)
         stated = self.end.plate_end_distance
-        edge = last + (min(b.x for b in bolts) if stated is None else in_mm(stated))
+        beyond = min(b.x for b in bolts) if stated is None else in_mm(stated)
+        half = max(b.along for b in bolts) / 2
+        if beyond <= half:
+            raise InputError(
+                f"plate_end_distance: got {beyond:g} mm; more than {half:g} mm, half the hole, is"
+                " due"
+            )
+        edge = last + beyond
         side = self.plate_side(bolts)
         beside = _WIDE if side is None else side
         zero = min(b.y for b in bolts) - beside
@@ -213,6 +224,14 @@ class PatternGeometry:
             )
             plate = own
         check_holes(plate, plate_holes)
+        if isinstance(plate, GussetPart):
+            for hole in plate_holes:
+                e, half = plate.edge_distance(hole.x, hole.y), hole.along / 2
+                if e <= half:
+                    raise InputError(
+                        f"hole {hole.mark!r}: {e:g} mm from an edge of the gusset; more than half"
+                        f" the hole, {half:g} mm, is due"
+                    )
         return Grip(
             element,
             where,
@@ -226,10 +245,32 @@ class PatternGeometry:
     def plate_side(self, bolts: Sequence[Opening]) -> float | None:
         """Outer bolt to the side edge of the plate, mm; None where it is not stated."""
         stated, plate = self.end.plate_edge_distance, self.end.plate
+        side = None if stated is None else in_mm(stated)
+        name = "plate_edge_distance"
         if stated is None and isinstance(plate, Covers):
             ys = [b.y for b in bolts]
-            return (in_mm(plate.width) - (max(ys) - min(ys))) / 2
-        return None if stated is None else in_mm(stated)
+            side, name = (in_mm(plate.width) - (max(ys) - min(ys))) / 2, "plate.width"
+        least = max(b.across for b in bolts) / 2
+        if side is not None and side <= least:
+            raise InputError(
+                f"{name}: {side:g} mm from the outer bolt to the plate's side edge; more than half"
+                f" the hole, {least:g} mm, is due"
+            )
+        return side
+
+    @property
+    def whole_section_held(self) -> bool:
+        """Whether bolts go through every element, each with at least half of its part of the area
+        in its part of the bolts: else the section is not held evenly."""
+        held = {grip.element: len(grip.bolts) for grip in self.grips}
+        areas = {}
+        for element in self.opened.elements:
+            part = element_part(self.section, element)
+            areas[element] = part.width * part.strips[0].t
+        total, bolts = sum(areas.values()), sum(held.values())
+        return all(
+            held.get(element, 0) / bolts >= 0.5 * area / total for element, area in areas.items()
+        )
 
     @property
     def spliced(self) -> bool:
@@ -318,21 +359,24 @@ def pattern_numbers(
         numbers["n_k"] = Number(behind, _FOUND)
     numbers |= _spacing(shape)
     drilled = {h.mark: h for h in end.holes.holes}
-    play = sorted(
-        f"hole {b.mark}, {drilled[b.mark].kind}"
+    usual, _ = shape.hole_size("standard")
+    # A hole reamed wider than standard is an oversize hole by another name.
+    kinds = [
+        "oversize" if b.along == b.across and b.along > usual else drilled[b.mark].kind
         for b in bolts
-        if drilled[b.mark].kind == "oversize"
-        or (drilled[b.mark].kind.endswith("slot") and drilled[b.mark].slot == "along")
+    ]
+    play = sorted(
+        f"hole {b.mark}, {kind}"
+        for b, kind in zip(bolts, kinds, strict=True)
+        if kind == "oversize" or (kind.endswith("slot") and drilled[b.mark].slot == "along")
     )
-    kinds = [drilled[b.mark].kind for b in bolts]
     worst = next(k for k in ("long slot", "short slot", "oversize", "standard") if k in kinds)
-    connected = {grip.element for grip in shape.grips}
     choices = {
         "share": end.share,
         "block_tension": end.block_tension,
         "chain": chain,
         "plate": "Cover plates" if shape.spliced else "Gusset",
-        "all_elements": "yes" if connected == set(shape.opened.elements) else "no",
+        "all_elements": "yes" if shape.whole_section_held else "no",
         "play": "; ".join(play) if play and shape.fastener.category != "TF" else "none",
         "hole_kind": worst,
     }
@@ -488,14 +532,19 @@ def _block_inputs(found: Block | None, bolts: int, prefix: str) -> tuple[Inputs,
     def total(values: list[float]) -> Number:
         return Number(math.fsum(values), f"{added(values)} mm, {_FOUND}")
 
+    def lost(piece: Piece) -> float:
+        # Where holes take more than there is, nothing is left, and never less than that.
+        return piece.lost if piece.net > 0.0 else piece.gross
+
     numbers = {
         "L_gv": total([p.gross for p in shear]),
-        "h_v": total([p.lost for p in shear]),
+        "h_v": total([lost(p) for p in shear]),
         "b_gt": total([p.gross for p in tension]),
-        "h_t": total([p.lost for p in tension]),
+        "h_t": total([lost(p) for p in tension]),
     }
-    if any(p.credit for p in tension):
-        numbers["c_t"] = total([p.credit for p in tension])
+    credits = [p.credit for p in tension if p.net > 0.0]
+    if any(credits):
+        numbers["c_t"] = total(credits)
     if len(found.separated) < bolts:
         numbers["n_sb"] = Number(float(len(found.separated)), _FOUND)
     marks = list(dict.fromkeys(found.marks))
@@ -527,7 +576,7 @@ def _spacing(shape: PatternGeometry) -> dict[str, Number]:
 
 def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
     """Every edge with the bolt nearest to it."""
-    cut, outlined = shape.end.edge_kind, shape.end.plate.shape is not None
+    cut = shape.end.edge_kind
     found: list[tuple[str, str, float, str, float | None]] = []
     for grip in shape.grips:
         own, bolts = grip.part.strips[0].t, grip.bolts
@@ -539,6 +588,12 @@ def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
         if math.isfinite(side):
             found.append((f"member side{grip.where}", "rolled", side, at.mark, t))
         holes = [hole for hole in grip.plate_holes if hole.bolt]
+        if isinstance(grip.plate, GussetPart):
+            own_edge = [(grip.plate.edge_distance(b.x, b.y), b.mark) for b in holes]
+            e, mark = min(own_edge)
+            if math.isfinite(e):
+                found.append((f"gusset edge{grip.where}", cut, e, mark, None))
+            continue
         ends = [(grip.plate.to_end(b.x, b.y), b.mark) for b in holes]
         beside = [
             (min(grip.plate.to_low(b.x, b.y), grip.plate.to_high(b.x, b.y)), b.mark) for b in holes
@@ -553,8 +608,6 @@ def _edges(shape: PatternGeometry, prefix: str) -> tuple[Inputs, ...]:
                 "of": of.replace("gusset", "cover plate") if shape.spliced else of,
                 "cut": how,
                 "part": of.partition(" ")[0],
-                # The far side of a gusset is no edge of plies in contact.
-                "outer": "no" if of.startswith("gusset side") and outlined else "yes",
             },
             {
                 "e": Number(e, f"bolt {mark}"),

@@ -26,7 +26,7 @@ from tensionlib.quantities import ANGLE, LENGTH, door, quantity
 from tensionlib.standards import Standard
 from tensionlib.steel import Grade, Section, bolt, grade, weld_metal
 from tensionlib.steel.bolts import SIZES
-from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
+from tensionlib.steel.moduli import component_radius, elastic_moduli, sag_inertia, slender_plate
 from tensionlib.steel.sections import DENSITY
 
 _STATED = "given"
@@ -77,10 +77,12 @@ def _bending(member: Member, beside: Across) -> Inputs:
     Z_x, Z_y = elastic_moduli(section)
     computed = "computed from the outline, first yield at its worst corner"
     numbers = {"Z_ex": Number(Z_x, computed), "Z_ey": Number(Z_y, computed)}
-    plate = outstand(section)
+    plate = slender_plate(section)
+    choices = {"plate": "none" if plate is None else plate[2]}
     if plate is not None:
         numbers |= {
-            name: Number(x, section.source) for name, x in zip(("b_s", "t_o"), plate, strict=True)
+            name: Number(x, section.source)
+            for name, x in zip(("b_s", "t_o"), plate[:2], strict=True)
         }
     span = member.length if beside.span is None else beside.span
     numbers["L_b"] = Number(in_mm(span), _STATED)
@@ -94,14 +96,14 @@ def _bending(member: Member, beside: Across) -> Inputs:
             "gamma_g": Number(beside.weight_factor, _STATED),
             "w_x": Number(load, _STATED),
         }
-        if section.I_x is not None:
-            numbers["I_sag"] = Number(section.I_x, section.source)
+        if beside.self_weight:
+            numbers["I_sag"] = Number(sag_inertia(section), "from the outline, free to sag aside")
     if in_mm(beside.side_load):
         numbers["w_y"] = Number(in_mm(beside.side_load), _STATED)
     for name, offset in (("e_x", beside.offset_x), ("e_y", beside.offset_y)):
         if in_mm(offset):
             numbers[name] = Number(in_mm(offset), _STATED)
-    return Inputs({}, numbers, {}, "across: ")
+    return Inputs(choices, numbers, {}, "across: ")
 
 
 def end_inputs(
@@ -339,7 +341,7 @@ def _pinned(
         "d_hp": Number(in_mm(end.hole), _STATED),
         "f_ypin": Number(in_mm(end.pin_f_y), "as certified"),
         "n_sp": Number(2.0, _COUNTED),
-        "c_p": Number(in_mm(end.gap), _STATED),
+        "c_p": Number(in_mm(end.gap), "given; 2 mm unless stated"),
     }
     eye = {
         "n_f": Number(1.0, _COUNTED),
@@ -385,8 +387,8 @@ def _rod(
             "d_sl": Number(in_mm(end.sleeve_diameter), _STATED),
             "l_en": Number(in_mm(end.engagement), _STATED),
         }
-        table = _table(steel, "f_y", "the sleeve"), steel.name
-        sleeve = (Inputs({}, sizes, {"f_y": table}, prefix + "sleeve: "),)
+        tables = _tables(steel, "f_y", "f_u", "the sleeve")
+        sleeve = (Inputs({}, sizes, tables, prefix + "sleeve: "),)
     choices = {
         "braced": "yes" if end.bracing and end.coupling == "turnbuckle" else "no",
         "certified": f"certified: {end.certified_by}",

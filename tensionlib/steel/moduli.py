@@ -52,24 +52,48 @@ def elastic_moduli(section: Section) -> tuple[float, float]:
     return Z_x, Z_y
 
 
-def outstand(section: Section) -> tuple[float, float] | None:
-    """Clear width and thickness of the most slender outstanding plate; None where there is none.
+def sag_inertia(section: Section) -> float:
+    """Second moment that resists a load along y on a section free to move aside, mm⁴.
 
-    Legs of an angle, halves of a flange, the stem of a tee; the plates of a tube and the web of a
-    channel or an I are held along both edges and are not outstands.
+    An angle loaded along a leg sags about its own axes: I_x less I_xy²/I_y.
+
+    Raises
+    ------
+    InputError
+        For a section given by stated properties alone.
+    """
+    if section.shape.startswith("double "):
+        assert section.I_x is not None
+        return section.I_x
+    if section.shape not in shapes.DIMENSIONS:
+        raise InputError(f"section: {section.designation} has no outline, so its sag is not known")
+    one = Properties.of(shapes.outline(section.shape, section.dims).moments())
+    return one.I_x - one.I_xy**2 / one.I_y
+
+
+def slender_plate(section: Section) -> tuple[float, float, str] | None:
+    """Clear width, thickness and kind of the most slender plate; None where none can be slender.
+
+    An "outstand" is a leg of an angle, half a flange, the stem of a tee; a "wall" that of a
+    rectangular tube; "round" a circular tube, its diameter and wall. The webs of the channels and
+    I sections of the catalogue are stocky enough for bending.
     """
     d = section.dims
     match section.shape.removeprefix("double "):
         case "angle":
-            return d["b1"] - d["t"], d["t"]
+            return d["b1"] - d["t"], d["t"], "outstand"
         case "channel":
-            return d["b_f"] - d["t_w"], d["t_f"]
+            return d["b_f"] - d["t_w"], d["t_f"], "outstand"
         case "I":
-            return (d["b_f"] - d["t_w"]) / 2, d["t_f"]
+            return (d["b_f"] - d["t_w"]) / 2, d["t_f"], "outstand"
         case "tee":
-            flange = (d["b_f"] - d["t_w"]) / 2, d["t_f"]
-            stem = d["d"] - d["t_f"], d["t_w"]
+            flange = (d["b_f"] - d["t_w"]) / 2, d["t_f"], "outstand"
+            stem = d["d"] - d["t_f"], d["t_w"], "outstand"
             return max(flange, stem, key=lambda plate: plate[0] / plate[1])
+        case "RHS":
+            return max(d["d"], d["b"]) - 2 * d["t"], d["t"], "wall"
+        case "CHS":
+            return d["d"], d["t"], "round"
         case _:
             return None
 

@@ -26,7 +26,14 @@ from tensionlib.quantities import (
 from tensionlib.standards.common_as_nzs.symbols import COMMON, SYMBOLS
 
 STATICS = "statics"
-OUTSTAND_LIMIT = 16.0  # Table 5.2, flat plate with one edge free, hot-rolled: from memory, sure
+# Table 5.2, from memory, sure of the first two, fairly sure of the third: yield limits of a flat
+# plate with one edge free, hot-rolled; with both edges held, cold-formed; of a round tube.
+PLATE_LIMITS = {"outstand": 16.0, "wall": 40.0, "round": 82.0}
+PLATE_WORDS = {
+    "outstand": "flat plate, one edge free, hot-rolled",
+    "wall": "flat plate, both edges held, cold-formed",
+    "round": "circular hollow section",
+}
 YOUNG = 200e3  # MPa, 1.4 (AS 4100) and 1.4/2.2 (NZS 3404), from memory, sure
 F_250 = Constant("250 MPa")
 
@@ -51,9 +58,9 @@ BENT = Notation(
         Symbol("Z_y", "Z_{y}", MODULUS, "elastic section modulus about y"),
         Symbol("M_sx", "M_{sx}", MOMENT, "nominal section moment capacity about x"),
         Symbol("M_sy", "M_{sy}", MOMENT, "nominal section moment capacity about y"),
-        Symbol("b_s", "b_{s}", LENGTH, "clear width of the most slender outstand"),
-        Symbol("t_o", "t_{o}", LENGTH, "thickness of that outstand"),
-        Symbol("lambda_e", r"\lambda_{e}", FACTOR, "slenderness of the outstand", "λ_e"),
+        Symbol("b_s", "b_{s}", LENGTH, "clear width of the most slender plate"),
+        Symbol("t_o", "t_{o}", LENGTH, "thickness of that plate"),
+        Symbol("lambda_e", r"\lambda_{e}", FACTOR, "slenderness of the plate", "λ_e"),
         Symbol("lambda_ey", r"\lambda_{ey}", FACTOR, "yield slenderness limit", "λ_ey"),
         Symbol("U_s", "U_{s}", FACTOR, "sum of the ratios of tension and bending"),
         Symbol("U_max", r"U_{\max}", FACTOR, "limit of the sum"),
@@ -96,10 +103,16 @@ def moments_added(M_w: Any, M_e: Any) -> Any:
     return M_w + M_e
 
 
-@formula("lambda_e", BENT, title="slenderness of the outstand", clause="5.2.2")
+@formula("lambda_e", BENT, title="slenderness of the plate", clause="5.2.2")
 def plate_slenderness(b_s: Any, t_o: Any, f_y: Any) -> Any:
     """Slenderness of a plate element, its yield stress against 250 MPa [factor]. 5.2.2."""
     return b_s / t_o * sqrt(f_y / F_250)
+
+
+@formula("lambda_e", BENT, title="slenderness of the round wall", clause="5.2.2")
+def round_slenderness(b_s: Any, t_o: Any, f_y: Any) -> Any:
+    """Slenderness of a circular hollow section [factor]. 5.2.2."""
+    return b_s / t_o * (f_y / F_250)
 
 
 @condition(BENT, title="does the section yield before its outstands buckle", clause="Table 5.2")

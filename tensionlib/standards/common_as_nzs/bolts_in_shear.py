@@ -5,6 +5,8 @@ AS 4100:1998 and NZS 3404:1997 9.3.2.1, 9.3.2.5, 9.3.3.
 
 from __future__ import annotations
 
+from collections.abc import Callable
+
 from tensionlib.calculation.inputs import Inputs
 from tensionlib.calculation.sheet import Entry
 from tensionlib.calculation.working import Working
@@ -75,8 +77,13 @@ def _packed(work: Working, end: Inputs, V_f: Entry) -> Entry:
     return work.step(pattern.packed, V_f)
 
 
-def slip_check(rules: Rules, work: Working, end: Inputs) -> None:
-    """Slip in service of tensioned friction bolts (TF)."""
+# From the force in service to that on the most loaded bolt.
+OnBolt = Callable[[Entry], Entry]
+
+
+def slip_check(rules: Rules, work: Working, end: Inputs, on_bolt: OnBolt | None = None) -> None:
+    """Slip in service of tensioned friction bolts (TF): of all together where they share equally,
+    else of the most loaded one, whose force `on_bolt` writes."""
     if end.choice("category") != "TF":
         return
     service = end.parts["service"]
@@ -100,6 +107,17 @@ def slip_check(rules: Rules, work: Working, end: Inputs) -> None:
         "k_h", pattern.SLIP_FACTORS[kind], "9.3.3.1", note=f"{kind} holes", source="from memory"
     )
     V_sf = work.step(pattern.slip, mu, end.take(work, "n_ei"), end.take(work, "N_ti"), k_h)
+    if on_bolt is not None:
+        capacity = work.step(
+            pattern.one_bolt,
+            phi,
+            V_sf,
+            gives="phiV_sf",
+            title="design slip capacity of a bolt",
+            clause="9.3.3.1",
+        )
+        work.check("slip in service, most loaded bolt", on_bolt(N_ser), capacity, "9.3.3.1")
+        return
     if end.choice("kind") == "bolted pattern":
         n_b = end.take(work, "n_b")
     else:

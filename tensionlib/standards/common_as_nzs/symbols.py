@@ -199,12 +199,13 @@ SYMBOLS = (
     Symbol("t_k", "t_{k}", LENGTH, "thickness of packing in a shear plane"),
     Symbol("V_fk", "V_{fk}", FORCE, "nominal shear capacity of a bolt, packed"),
     Symbol("N_star_ser", "N^{*}_{ser}", FORCE, "force in service", "N*_ser"),
+    Symbol("V_star_ser", "V^{*}_{ser}", FORCE, "force on a bolt in service", "V*_ser"),
     Symbol("mu", r"\mu", FACTOR, "slip factor", "μ"),
     Symbol("n_ei", "n_{ei}", COUNT, "interfaces that slip"),
     Symbol("N_ti", "N_{ti}", FORCE, "tension in a bolt as installed"),
     Symbol("k_h", "k_{h}", FACTOR, "factor for the kind of hole"),
     Symbol("V_sf", "V_{sf}", FORCE, "nominal slip capacity of a bolt"),
-    Symbol("phiV_sf", _PHI + "V_{sf}", FORCE, "design slip capacity of the bolts", "φV_sf"),
+    Symbol("phiV_sf", _PHI + "V_{sf}", FORCE, "design slip capacity in service", "φV_sf"),
     # What the standards write in different ways
     Symbol("k_t", "k_{t}", FACTOR, "correction factor for the distribution of forces"),
 )

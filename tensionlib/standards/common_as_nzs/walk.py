@@ -95,6 +95,11 @@ def design(
             clause=bolts.MINIMUM_ACTION_CLAUSE,
         )
 
+        if N_os is not None and len(capacities) > 1:
+            fracture = work.least(
+                "phiN_tu", *capacities[1:], title="design capacity, net fracture", clause="7.1"
+            )
+            work.check("net section at the brace's overstrength", N_os, fracture, "7.2")
     bending_checks(rules, work, member, force, phiN_t, f_y)
     service_lines(work, member)
     for end in ends:

@@ -83,19 +83,25 @@ def _slenderness(work: Working, bent: Inputs, f_y: Entry) -> tuple[Entry, Entry]
     """Limit and slenderness of an outstand that buckles before it yields; None for none."""
     if not bent.has("b_s"):
         return None
-    slenderness = work.step(
-        bending.plate_slenderness, _take(work, bent, "b_s"), _take(work, bent, "t_o"), f_y
-    )
+    kind = bent.choice("plate")
+    formula = bending.round_slenderness if kind == "round" else bending.plate_slenderness
+    slenderness = work.step(formula, _take(work, bent, "b_s"), _take(work, bent, "t_o"), f_y)
     limit = work.fixed(
         BENT["lambda_ey"],
-        bending.OUTSTAND_LIMIT,
+        bending.PLATE_LIMITS[kind],
         "Table 5.2",
-        note="flat plate, one edge free, hot-rolled",
-        source="Table 5.2, from memory, sure",
+        note=bending.PLATE_WORDS[kind],
+        source="Table 5.2, from memory",
     )
     yes, no = "the elastic modulus holds", "the modulus is reduced"
     if work.holds(bending.yields_first, slenderness, limit, yes=yes, no=no):
         return None
+    if kind == "round":
+        work.not_covered(
+            "tension with bending",
+            "a slender round tube's effective modulus is not offered",
+            "5.2.5",
+        )
     return limit, slenderness
 
 
@@ -106,6 +112,13 @@ def service_lines(work: Working, member: Inputs) -> None:
     """Stretch and sag under the force in service, and the spacing of a pair's ties."""
     _ties(work, member)
     if not member.has("N_star_ser"):
+        for name, allowed in (("stretch", "Delta_Lmax"), ("sag", "Delta_max")):
+            if member.has(allowed):
+                work.not_covered(
+                    name,
+                    "a limit is stated and no force in service: give design(..., service='150 kN')",
+                    "practice",
+                )
         return
     with work.part("In service"):
         N = member.take(work, "N_star_ser")
@@ -117,6 +130,10 @@ def service_lines(work: Working, member: Inputs) -> None:
             return
         (bent,) = member.parts["bending"]
         if not (bent.has("w_g") and bent.has("I_sag")):
+            if member.has("Delta_max"):
+                work.not_covered(
+                    "sag", "a limit is stated and no self-weight is taken to sag by", "practice"
+                )
             return
         w_g, L_b, I_sag = (_take(work, bent, n) for n in ("w_g", "L_b", "I_sag"))
         alone = work.step(bending.sag, w_g, L_b, E, I_sag)

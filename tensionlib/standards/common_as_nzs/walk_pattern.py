@@ -97,7 +97,14 @@ def pattern_end(
             pattern.one_bolt, *bolt_capacity(rules, work, end), title="design capacity of a bolt"
         )
         work.check("bolt shear, most loaded bolt", V_b, capacity, "9.3.2.1")
-        slip_check(rules, work, end)
+        most = end.parts["most loaded"][0]
+        elastic = end.choice("share") == "elastic"
+        slip_check(
+            rules,
+            work,
+            end,
+            (lambda N: _bolt_force(work, end, N, "V_star_ser", most)) if elastic else None,
+        )
         if end.choice("play") != "none":
             work.not_covered(
                 "holes with play along the force",
@@ -368,8 +375,6 @@ def _edge(work: Working, end: Inputs, edge: Inputs, d_f: Entry) -> None:
     e_min = work.step(detailing.least_edge, k_e, d_f, gives=least)
     e = edge.take(work, "e", distance)
     work.check(f"least edge distance, {of}", e_min, e, "Table 9.6.2", kind="detailing")
-    if edge.choice("outer") == "no":
-        return
     limit = work.fixed("e_lim", detailing.EDGE_LIMIT, "9.6.4", note="limit of the clause")
     e_max = work.least(
         most,

@@ -204,9 +204,8 @@ def test_the_outline_cuts_the_width_and_gives_the_edges():
     calc = outlined()
     width = 2 * 140 / sqrt(3)
     assert capacity(calc, "Gusset", "yield") == pytest.approx(0.9 * width * 12 * 260)
-    # The gusset's end is at 400 - 120 = 280: 100 beyond the last bolt; its side at 90.
-    assert capacity(calc, "Bolt distances", "least edge distance, gusset end") == 100.0
-    assert capacity(calc, "Bolt distances", "least edge distance, gusset side") == 90.0
+    # The gusset's end is at 400 - 120 = 280, 100 beyond the last bolt; its side at 90 is nearer.
+    assert capacity(calc, "Bolt distances", "least edge distance, gusset edge") == 90.0
     # Block: shear 100 + 140, tension to the nearer side edge 90.
     gv, nv, nt = 240 * 12, (240 - 2.5 * 22) * 12, (90 - 11) * 12
     assert capacity(calc, "Gusset", "block shear") == pytest.approx(

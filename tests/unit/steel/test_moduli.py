@@ -13,7 +13,7 @@ import pytest
 
 import tensionlib as tl
 from tensionlib.errors import InputError
-from tensionlib.steel.moduli import component_radius, elastic_moduli, outstand
+from tensionlib.steel.moduli import component_radius, elastic_moduli, slender_plate
 
 Rectangle = tuple[float, float, float, float]  # from x, y to x, y
 
@@ -183,25 +183,31 @@ def test_two_channels_back_to_back():
 @pytest.mark.parametrize(
     ("name", "plate"),
     [
-        ("150x100x12 UA", (138.0, 12.0)),
-        ("100x100x10 EA", (90.5, 9.5)),
-        ("200 PFC", (69.0, 12.0)),
-        ("310UB40.4", (79.45, 10.2)),
+        ("150x100x12 UA", (138.0, 12.0, "outstand")),
+        ("100x100x10 EA", (90.5, 9.5, "outstand")),
+        ("200 PFC", (69.0, 12.0, "outstand")),
+        ("310UB40.4", (79.45, 10.2, "outstand")),
         ("150x12 FL", None),
-        ("114.3x4.8 CHS", None),
-        ("2/150x100x12 UA, long legs, gap 12 mm", (138.0, 12.0)),
+        ("114.3x4.8 CHS", (114.3, 4.8, "round")),
+        ("200x200x5.0 SHS", (190.0, 5.0, "wall")),
+        ("2/150x100x12 UA, long legs, gap 12 mm", (138.0, 12.0, "outstand")),
     ],
 )
-def test_the_most_slender_outstand(name, plate):
-    found = outstand(tl.section(name))
-    assert found == (None if plate is None else pytest.approx(plate))
+def test_the_most_slender_plate(name, plate):
+    found = slender_plate(tl.section(name))
+    if plate is None:
+        assert found is None
+        return
+    *sizes, kind = plate
+    assert found[:2] == pytest.approx(sizes)
+    assert found[2] == kind
 
 
 def test_the_outstand_of_a_tee_is_the_more_slender_of_flange_and_stem():
     """79.5/10 = 7.95 against 140/6 = 23.3; with a thin flange 82/4 = 20.5 against 146/8 = 18.3."""
-    assert outstand(SHARP[3][0]) == (140.0, 6.0)
+    assert slender_plate(SHARP[3][0]) == (140.0, 6.0, "outstand")
     thin = tl.by_dimensions("tee", d="150 mm", b_f="172 mm", t_f="4 mm", t_w="8 mm", r1="0 mm")
-    assert outstand(thin) == (82.0, 4.0)
+    assert slender_plate(thin) == (82.0, 4.0, "outstand")
 
 
 def test_the_least_radius_of_one_component():
