@@ -79,6 +79,11 @@ TOLD = {
     "nzs3404.bearing.FACTOR": ("C_1, ply bearing", "9.3.2.4", FAIRLY),
     "nzs3404.overstrength.FACTORS": ("φ_oms by member category", "section 12", UNSURE),
     f"{COMMON}.bending.PLATE_LIMITS": ("λ_ey by kind of plate", "Table 5.2", FAIRLY),
+    f"{COMMON}.welds.SHORTEST_LAP": (
+        "shortest lap in mm, advice",
+        "practice",
+        "AISC 360-16 J2.2b, from memory",
+    ),
     f"{COMMON}.bending.YOUNG": ("E in MPa", "", SURE),
     f"{COMMON}.block.UNIFORM": ("k_bs, tension uniform", "9.1.9", FAIRLY),
     f"{COMMON}.block.NON_UNIFORM": ("k_bs, tension not uniform", "9.1.9", FAIRLY),

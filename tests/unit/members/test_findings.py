@@ -1,4 +1,4 @@
-"""Findings of the hand-worked checks, each held by a test: numbers on the unsafe side, bad input."""
+"""Findings of the hand-worked checks, each held by a test: unsafe numbers and bad input."""
 
 from __future__ import annotations
 
@@ -60,7 +60,7 @@ def test_both_flanges_need_bolts_in_both():
 
 
 def test_slip_of_the_most_loaded_bolt():
-    """Two bolts at 110 mm, 50 apart, off the centroid by 60.9: each carries 1.32 of the force, 66 kN
+    """Two bolts at 110 mm, 50 apart, 60.9 off the centroid: each carries 1.32 of the force, 66 kN
     of 50 in service, on 0.7·0.35·145 = 35.5; it slips."""
     holes = Pattern.lines(2, ["110 mm"], "40 mm", "50 mm")
     calc = design(holes, force="60 kN", service="50 kN", share="elastic", bolts="M20 8.8/TF")
