@@ -230,8 +230,26 @@ def check_file(
 def _designed(row: MemberRow, standard: str, view: View) -> Calculation:
     end_1 = row.end_1.end()
     end_2 = None if row.end_2 == row.end_1 else row.end_2.end()
-    member = Member(row.mark, row.section, row.steel, row.length, end_1, end_2, row.title)
-    return design(member, row.force, standard=standard, view=view, origin=row.origin)
+    member = Member(
+        row.mark,
+        row.section,
+        row.steel,
+        row.length,
+        end_1,
+        end_2,
+        row.title,
+        across=row.across,
+        overstrength=row.overstrength,
+        ties=row.ties,
+    )
+    return design(
+        member,
+        row.force,
+        standard=standard,
+        service=row.service_force,
+        view=view,
+        origin=row.origin,
+    )
 
 
 def _summary(record: dict[str, Any]) -> tuple[str, ...]:

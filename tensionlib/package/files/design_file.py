@@ -37,6 +37,7 @@ from tensionlib.package.files.records import (
     written,
 )
 from tensionlib.package.files.schedule import ENDS, Setup, no_end, rows_of
+from tensionlib.package.files.shaped import KINDS, beside_of
 from tensionlib.quantities import Quantity
 
 if TYPE_CHECKING:
@@ -231,14 +232,15 @@ class CheckedText:
             self._tell(path, value, f"{got}{due[kind]} is due" if kind in due else error["msg"])
 
     def _tell_kind(self, path: KeyPath, value: object) -> None:
-        due = 'write kind = "bolted" or kind = "welded"'
+        *others, last = (f'"{kind}"' for kind in sorted(KINDS))
+        due = f"write kind = {', '.join(others)} or {last}"
         if not isinstance(value, dict):
             self._tell(path, value, f"got {shown(value)}; the name of an end or a table is due")
         elif "kind" not in value:
             self._tell((*path, "kind"), "", f"missing; {due}", True)
         else:
             kind = value["kind"]
-            near = did_you_mean(kind, ("bolted", "welded")) if isinstance(kind, str) else ""
+            near = did_you_mean(kind, sorted(KINDS)) if isinstance(kind, str) else ""
             self._tell((*path, "kind"), kind, f"got {shown(kind)}; {due}.{near}".removesuffix("."))
 
     def _unknown(self, path: KeyPath, model: type[BaseModel]) -> None:
@@ -270,7 +272,11 @@ class CheckedText:
         table: Any = self._raw
         for step in path:
             table = table[step]
-        return schema.BoltedTable if table["kind"] == "bolted" else schema.WeldedTable
+        models: dict[str, type[BaseModel]] = {
+            "bolted": schema.BoltedTable,
+            "welded": schema.WeldedTable,
+        }
+        return models.get(table["kind"], schema.ShapedTable)
 
     def _check_name(self, path: KeyPath, name: str, field: str) -> bool:
         """Whether a section, steel, bolt, weld metal or standard is known."""
@@ -353,7 +359,10 @@ class CheckedText:
         return ends
 
     def _end(
-        self, made: schema.BoltedTable | schema.WeldedTable | None, name: str, path: KeyPath
+        self,
+        made: schema.BoltedTable | schema.WeldedTable | schema.ShapedTable | None,
+        name: str,
+        path: KeyPath,
     ) -> EndDetail | None:
         """An end whose fields are each sound, checked as a whole."""
         if made is None:
@@ -365,7 +374,7 @@ class CheckedText:
             detail.end()
         except TensionlibError as error:  # its message begins with the field, as the door's do
             field = str(error).partition(": ")[0]
-            known = field in type(made).model_fields
+            known = field in type(made).model_fields or field in (made.model_extra or {})
             place = (*path, field) if known else path
             reason = reason_of(error, field) if known else str(error)
             value = getattr(made, field) if known else ""
@@ -421,7 +430,18 @@ class CheckedText:
         end_1, end_2 = found[0], found[-1]
         if end_1 is None or end_2 is None:
             return None
+        beside = {}
+        for key in ("across", "overstrength"):
+            if (table := getattr(made, key)) is not None:
+                try:
+                    beside[key] = beside_of(key, table)
+                except TensionlibError as error:
+                    self._tell((*path, key), table, reason_of(error, key))
+                    return None
         return MemberRow(
+            service_force=made.service_force,
+            ties=made.ties,
+            **beside,
             mark=made.mark,
             title=made.title,
             section=made.section,
@@ -487,11 +507,9 @@ class CheckedText:
 
 def _stated(made: BaseModel, but: tuple[str, ...] = ()) -> tuple[tuple[str, Any], ...]:
     """The fields that the file states, in the order of the model."""
-    return tuple(
-        (key, getattr(made, key))
-        for key in type(made).model_fields
-        if key in made.model_fields_set and key not in but
-    )
+    own = (key for key in type(made).model_fields if key in made.model_fields_set)
+    keys = (*own, *(made.model_extra or {}))
+    return tuple((key, getattr(made, key)) for key in keys if key not in but)
 
 
 def _project(made: schema.ProjectTable) -> Project:

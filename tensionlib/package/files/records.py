@@ -5,13 +5,14 @@ from __future__ import annotations
 from collections.abc import Mapping
 from dataclasses import dataclass
 from pathlib import Path
-from typing import TYPE_CHECKING, Any, Literal
+from typing import TYPE_CHECKING, Any
 
 from tensionlib.package.files.problems import Problem
 from tensionlib.quantities import FORCE, Quantity, parse
 
 if TYPE_CHECKING:
-    from tensionlib.joints.ends import Bolted, Welded
+    from tensionlib.members.beside import Across, Overstrength
+    from tensionlib.members.member import End
 
 Stated = str | int | float | Quantity
 
@@ -62,21 +63,22 @@ class EndDetail:
     ----------
     name : str
         The name it has under `[ends]`; empty for one written inside a member.
-    kind : {"bolted", "welded"}
+    kind : str
+        "bolted", "bolted pattern", "welded", "welded runs", "pinned" or "rod".
     stated : tuple of (name, value)
-        The fields that were stated, lengths as Quantity. What was left out is not here: the
-        connection takes its own default for it.
+        The fields that were stated, lengths of a regular end as Quantity. What was left out is not
+        here: the connection takes its own default for it.
     plate : tuple of (name, value)
         The fields of the gusset that were stated.
     """
 
     name: str
-    kind: Literal["bolted", "welded"]
-    stated: tuple[tuple[str, Stated], ...]
-    plate: tuple[tuple[str, Stated], ...]
+    kind: str
+    stated: tuple[tuple[str, Any], ...]
+    plate: tuple[tuple[str, Any], ...]
 
     def arguments(self) -> dict[str, Any]:
-        """Keyword arguments for `Bolted` or `Welded`; `plate` is a dict of them for `Gusset`."""
+        """Keyword arguments for the kind's class; `plate` is a dict of them for `Gusset`."""
         return {**dict(self.stated), "plate": dict(self.plate)}
 
     def table(self) -> dict[str, Any]:
@@ -87,7 +89,7 @@ class EndDetail:
             "plate": {name: written(value) for name, value in self.plate},
         }
 
-    def end(self) -> Bolted | Welded:
+    def end(self) -> End:
         """The connection itself.
 
         Raises
@@ -95,11 +97,9 @@ class EndDetail:
         InputError, UnitError
             When fields that are each well stated do not go together.
         """
-        from tensionlib.joints.ends import Bolted, Gusset, Welded
+        from tensionlib.package.files.shaped import end_of
 
-        arguments = self.arguments()
-        arguments["plate"] = Gusset(**arguments["plate"])
-        return Bolted(**arguments) if self.kind == "bolted" else Welded(**arguments)
+        return end_of(self.kind, self.arguments())
 
 
 @dataclass(frozen=True)
@@ -118,6 +118,9 @@ class MemberRow:
         Where it was stated: "members.csv row 3" or "canopy.toml line 40".
     standard : str
         Name of the standard for this member alone; empty for the project's.
+    service_force, ties : Quantity, optional
+    across : Across, optional
+    overstrength : Overstrength, optional
     """
 
     mark: str
@@ -130,6 +133,10 @@ class MemberRow:
     end_2: EndDetail
     origin: str
     standard: str = ""
+    service_force: Quantity | None = None
+    ties: Quantity | None = None
+    across: Across | None = None
+    overstrength: Overstrength | None = None
 
 
 @dataclass(frozen=True)
@@ -177,8 +184,12 @@ class DesignFile:
     problems: tuple[Problem, ...] = ()
 
 
-def written(value: Stated) -> str | int | float:
+def written(value: Any) -> Any:
     """A stated value as a design file writes it, so that reading it gives the same number."""
+    if isinstance(value, Mapping):
+        return {key: written(one) for key, one in value.items()}
+    if isinstance(value, list | tuple):
+        return [written(one) for one in value]
     if not isinstance(value, Quantity):
         return value
     # Twelve significant figures are what a quantity carries; a division may cost the last of them.

@@ -41,6 +41,7 @@ COLUMNS: dict[str, tuple[str, ...]] = {
     "steel": (),
     "length": (),
     "force": (),
+    "service_force": (),
     "end": (),
     "end_1": ("start end",),
     "end_2": ("far end",),
@@ -49,9 +50,9 @@ COLUMNS: dict[str, tuple[str, ...]] = {
 REQUIRED = ("mark", "section", "steel", "length", "force")
 ENDS = ("end", "end_1", "end_2")
 DEFAULTS = ("title", "section", "steel", "length", *ENDS, "standard")
-QUANTITIES = {"length": LENGTH, "force": FORCE}
+QUANTITIES = {"length": LENGTH, "force": FORCE, "service_force": FORCE}
 
-_UNITS = {"length": "mm", "force": "kN"}
+_UNITS = {"length": "mm", "force": "kN", "service_force": "kN"}
 _WRITE = {
     "mark": "the member's mark, for example 'RB1'",
     "section": "a designation, for example '150x90x10 UA'",
@@ -398,7 +399,7 @@ class _Reader:
             return None
         good = not self._lost
         taken: dict[str, Any] = {}
-        for column in (*required, "title", "standard"):
+        for column in (*required, "title", "standard", "service_force"):
             if column in self._lost:
                 continue
             cell = self._cell(column, cells)
@@ -428,6 +429,7 @@ class _Reader:
             end_2=taken["end_2"] if "end_2" in taken else taken["end"],
             origin=f"{self._name} row {number}",
             standard=taken["standard"],
+            service_force=taken["service_force"] or None,
         )
 
     def _take(self, column: str, cell: Cell, required: bool) -> object:

@@ -52,7 +52,9 @@ PAPERS = ("A4", "Letter")
 
 # A control character keeps these apart from every key a file may hold.
 NAME_TAG, BOLTED_TAG, WELDED_TAG = "\x00name", "\x00bolted", "\x00welded"
-TAGS = (NAME_TAG, BOLTED_TAG, WELDED_TAG)
+SHAPED_TAG = "\x00shaped"
+TAGS = (NAME_TAG, BOLTED_TAG, WELDED_TAG, SHAPED_TAG)
+SHAPED = ("bolted pattern", "welded runs", "pinned", "rod")
 
 
 @dataclass(frozen=True, eq=False)
@@ -137,6 +139,20 @@ def _date(value: object) -> object:
     return value
 
 
+def _length_factor(name: str, value: Any) -> float:
+    return factor(name, value, above=0.0, at_most=5.0)
+
+
+def _slip_factor(name: str, value: Any) -> float:
+    return factor(name, value, above=0.0, at_most=1.0)
+
+
+_FORCE_JSON = {
+    "type": "string",
+    "description": "a force with its unit, zero or more",
+    "examples": [FORCE_EXAMPLE],
+}
+
 Block = Annotated[str, AfterValidator(text_block)]
 Line = Annotated[str, AfterValidator(text_line)]
 Name = Annotated[str, Taken(_name, {"type": "string", "minLength": 1, "pattern": "\\S"})]
@@ -213,6 +229,18 @@ class GussetTable(Table):
     thickness: Annotated[Quantity, above_zero("12 mm")] = Field(examples=["12 mm"])
     steel: Name = Field(examples=["AS/NZS 3678 250"])
     width: Annotated[Quantity | None, above_zero("260 mm")] = None
+    hanger: dict[str, Any] | None = Field(
+        None, description="the flange of a tee hung by bolts in tension"
+    )
+    shape: dict[str, Any] | None = Field(None, description="the gusset's own outline")
+    compression: Annotated[Quantity | None, Taken(take_force, _FORCE_JSON)] = None
+    free_length: Annotated[Quantity | None, above_zero("150 mm")] = None
+    length_factor: Annotated[float, Taken(_length_factor, {"type": "number"})] = 1.2
+    support_leg: Annotated[Quantity | None, above_zero("6 mm")] = None
+    support_quality: Annotated[str, one_of(*QUALITIES)] = "SP"
+    number: Annotated[int | None, whole(at_most=2)] = Field(
+        None, description="cover plates of a splice, in place of a gusset"
+    )
 
 
 class BoltedTable(Table):
@@ -234,6 +262,8 @@ class BoltedTable(Table):
     plate_edge_distance: Annotated[Quantity | None, above_zero("50 mm")] = None
     clearance: Annotated[Quantity | None, zero_or_more("2 mm")] = None
     edge_kind: Annotated[str, one_of(*EDGES)] = "sheared"
+    packing: Annotated[Quantity | None, above_zero("8 mm")] = None
+    slip_factor: Annotated[float, Taken(_slip_factor, {"type": "number"})] = 0.35
     k_te: StatedFactor = None
     k_te_reason: Line = ""
 
@@ -251,25 +281,41 @@ class WeldedTable(Table):
     quality: Annotated[str, one_of(*QUALITIES)] = "SP"
     metal: Name = "E48XX"
     slot_clearance: Annotated[Quantity | None, zero_or_more("3 mm")] = None
+    shear_lag_by_length: bool = False
     k_te: StatedFactor = None
     k_te_reason: Line = ""
+
+
+class ShapedTable(BaseModel):
+    """An end of another kind; its own class checks its fields."""
+
+    model_config = ConfigDict(extra="allow", strict=True, frozen=True)
+
+    kind: Annotated[str, one_of(*SHAPED)]
+    plate: GussetTable = Field(examples=[{"thickness": "12 mm", "steel": "AS/NZS 3678 250"}])
 
 
 def _tag(value: object) -> str | None:
     if isinstance(value, str):
         return NAME_TAG
     kind = value.get("kind") if isinstance(value, dict) else None
-    return {"bolted": BOLTED_TAG, "welded": WELDED_TAG}.get(kind) if isinstance(kind, str) else None
+    if not isinstance(kind, str):
+        return None
+    tags = {"bolted": BOLTED_TAG, "welded": WELDED_TAG} | dict.fromkeys(SHAPED, SHAPED_TAG)
+    return tags.get(kind)
 
 
 EndTable = Annotated[
-    Annotated[BoltedTable, Tag(BOLTED_TAG)] | Annotated[WeldedTable, Tag(WELDED_TAG)],
+    Annotated[BoltedTable, Tag(BOLTED_TAG)]
+    | Annotated[WeldedTable, Tag(WELDED_TAG)]
+    | Annotated[ShapedTable, Tag(SHAPED_TAG)],
     Discriminator(_tag),
 ]
 EndReference = Annotated[
     Annotated[Name, Tag(NAME_TAG)]
     | Annotated[BoltedTable, Tag(BOLTED_TAG)]
-    | Annotated[WeldedTable, Tag(WELDED_TAG)],
+    | Annotated[WeldedTable, Tag(WELDED_TAG)]
+    | Annotated[ShapedTable, Tag(SHAPED_TAG)],
     Discriminator(_tag),
 ]
 
@@ -287,6 +333,12 @@ class MemberTable(Table):
     start_end: EndReference | None = None
     far_end: EndReference | None = None
     standard: Line = Field("", description="for this member alone, in place of the project's")
+    service_force: Annotated[Quantity | None, Taken(take_force, _FORCE_JSON)] = None
+    ties: Annotated[Quantity | None, above_zero("1500 mm")] = None
+    across: dict[str, Any] | None = Field(None, description="loads across the member")
+    overstrength: dict[str, Any] | None = Field(
+        None, description="a brace that yields in an earthquake"
+    )
 
 
 class ColumnsTable(Table):
@@ -298,6 +350,7 @@ class ColumnsTable(Table):
     steel: Name = ""
     length: Name = ""
     force: Name = ""
+    service_force: Name = ""
     end: Name = ""
     end_1: Name = ""
     end_2: Name = ""

@@ -451,7 +451,7 @@ BAD_HEADS: list[tuple[tuple[str, ...], dict[str, Any], list[str]]] = [
         {},
         [
             "row 1, zzz: unknown column. Columns are mark, title, section, steel, length, force,"
-            f" end, end_1, end_2, standard. {_RENAME}"
+            f" service_force, end, end_1, end_2, standard. {_RENAME}"
         ],
     ),
     (
@@ -657,7 +657,8 @@ BAD_ARGUMENTS: list[tuple[dict[str, Mapping[str, str]], type[Exception], str]] =
     (
         {"columns": {"froce": "N"}},
         InputError,
-        "columns: 'froce' is none of mark, title, section, steel, length, force, end, end_1, end_2,"
+        "columns: 'froce' is none of mark, title, section, steel, length, force, service_force,"
+        " end, end_1, end_2,"
         " standard. Did you mean 'force'?",
     ),
     (
