@@ -348,6 +348,7 @@ def test_any_text_is_kept_to_the_letter(
 # fragment of the changed text that first stands on it.
 
 _NO_NAME = "is blank; text is due"
+_MEANT = "Did you mean 'bolted' or 'bolted pattern'?"
 _KIND = 'write kind = "bolted", "bolted pattern", "pinned", "rod", "welded" or "welded runs"'
 _ENDS_OR_TWO = "write end for both ends alike, or start_end and far_end"
 BAD: list[tuple[str, str, list[tuple[str, str]]]] = [
