@@ -15,6 +15,10 @@ def gusset_itself(rules: Rules, work: Working, end: Inputs, N_c: Entry, f_yp: En
     for own in end.parts["gusset"]:
         if own.choice("spread"):
             work.note(own.choice("spread"), "practice")
+            work.assume(
+                f"{end.choice('label')}no notch of the gusset's outline lies between two of its"
+                " bolts: the search for blocks takes the plate there as whole"
+            )
         A_gp = end.kept("A_gp")
         if own.has("L_f") and A_gp is not None:
             _compression(rules, work, end, own, A_gp, f_yp)
