@@ -236,6 +236,7 @@ def _fasteners(
     choices = {
         "threads": end.threads,
         "category": fastener.category,
+        "bolt_class": fastener.grade,
         "edge_kind": end.edge_kind,
     }
     return numbers, choices

@@ -54,7 +54,8 @@ SIZES: dict[str, Size] = {
         Size("M36", 36.0, 4.0, 817.0, 759.0, 1018.0, 60.0, 490e3),
     )
 }
-CLASSES = {"4.6": (400.0, 240.0), "8.8": (830.0, 660.0)}
+# Class 10.9 is of AS 4100:2020, its strengths from memory, fairly sure.
+CLASSES = {"4.6": (400.0, 240.0), "8.8": (830.0, 660.0), "10.9": (1040.0, 940.0)}
 CATEGORIES = {
     "S": "snug tight",
     "TB": "tensioned, bearing",

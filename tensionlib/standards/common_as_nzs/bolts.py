@@ -88,6 +88,13 @@ def shear_threads_out(f_uf: Any, k_r: Any, n_x: Any, A_o: Any) -> Any:
     return 0.62 * f_uf * k_r * n_x * A_o
 
 
+@formula("V_f", COMMON, title="shear capacity of a bolt of class 10.9", clause="9.3.2.1")
+def lesser_ductility(k_rd: Any, V_f: Any) -> Any:
+    """Nominal shear capacity of a bolt of class 10.9, threads in the shear plane [force]. 9.2.2.1
+    of AS 4100:2020."""
+    return k_rd * V_f
+
+
 @formula("N_tf", COMMON, title="tension capacity of a bolt", clause="9.3.2.2")
 def bolt_tension(A_s: Any, f_uf: Any) -> Any:
     """Nominal tension capacity of a bolt [force]. 9.3.2.2. No end on offer puts a bolt in tension;

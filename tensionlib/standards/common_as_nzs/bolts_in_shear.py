@@ -45,7 +45,30 @@ def bolt_capacity(rules: Rules, work: Working, end: Inputs) -> tuple[Entry, Entr
         V_f = work.step(
             bolts.shear_threads_out, f_uf, k_r, end.take(work, "n_x"), end.take(work, "A_o")
         )
+    if end.choice("bolt_class") == "10.9":
+        V_f = _class_10_9(rules, work, end, V_f)
     return phi, _packed(work, end, V_f)
+
+
+def _class_10_9(rules: Rules, work: Working, end: Inputs, V_f: Entry) -> Entry:
+    """Bolts of class 10.9, which came with AS 4100:2020."""
+    if rules.class_10_9 is None:
+        work.not_covered(
+            "bolts of class 10.9",
+            f"this edition of {rules.name} has no bolts of class 10.9, as far as remembered",
+            "9.3.2.1",
+        )
+        return V_f
+    if end.choice("threads") != "in shear plane":
+        return V_f
+    k_rd = work.fixed(
+        "k_rd",
+        rules.class_10_9,
+        "9.3.2.1",
+        note="class 10.9, threads in the shear plane",
+        source="from memory, fairly sure",
+    )
+    return work.step(bolts.lesser_ductility, k_rd, V_f, gives="V_frd")
 
 
 def _joint_factor(work: Working, end: Inputs) -> Entry:

@@ -47,7 +47,8 @@ class Rules:
     `k_t` is the symbol under which the standard writes the correction factor; `slip_clause` is
     where it gives the capacity factor for slip; `bearing` writes the nominal bearing capacity of
     a ply at one bolt; `overstrength` writes the action of a brace that yields in an earthquake,
-    None where the standard leaves that to another.
+    None where the standard leaves that to another. `class_10_9` is the factor on bolts of that
+    class with threads in the shear plane, None where the edition has no such bolts.
     """
 
     name: str
@@ -56,6 +57,7 @@ class Rules:
     slip_clause: str
     bearing: Bearing
     overstrength: Overstrength | None
+    class_10_9: float | None
     block: BlockRule
     not_checked: tuple[str, ...]
 

@@ -80,6 +80,8 @@ SYMBOLS = (
     Symbol("L_j", "L_{j}", LENGTH, "length of the joint"),
     Symbol("k_r", "k_{r}", FACTOR, "reduction factor for a long joint"),
     Symbol("V_f", "V_{f}", FORCE, "nominal shear capacity of a bolt"),
+    Symbol("k_rd", "k_{rd}", FACTOR, "reduction factor for bolts of class 10.9"),
+    Symbol("V_frd", "V_{f,rd}", FORCE, "nominal shear capacity of a bolt of class 10.9"),
     Symbol("phiV_f", _PHI + "V_{f}", FORCE, "design shear capacity of all bolts", "φV_f"),
     Symbol("e_1", "e_{1}", LENGTH, "end distance of the member"),
     Symbol("e_2", "e_{2}", LENGTH, "edge distance across the force, member"),

@@ -33,6 +33,7 @@ RULES = Rules(
     slip_clause="Table 3.3(2)",
     bearing=bearing,
     overstrength=overstrength,
+    class_10_9=None,
     block=BLOCK,
     not_checked=NOT_CHECKED,
 )

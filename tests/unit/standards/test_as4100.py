@@ -91,3 +91,17 @@ def test_block_shear_is_a_clause_of_as4100_and_practice_in_nzs3404():
     assert tl.design(flat, "200 kN")["Gusset", "block shear, between the lines"].clause == (
         "practice"
     )
+
+
+def test_bolts_of_class_10_9_came_with_2020():
+    """0.83·0.62·1040·225 with threads in the shear plane; nothing off the shank; fairly sure."""
+    end = bolted(bolts="M20 10.9/S")
+    new = tl.design(member(end=end), "250 kN", standard="AS 4100:2020")
+    assert new["bolt shear"].capacity.internal == pytest.approx(0.8 * 3 * 0.83 * 0.62 * 1040 * 225)
+    shank = tl.design(
+        member(end=end.but(threads="out of shear plane")), "250 kN", standard="AS 4100"
+    )
+    assert shank["bolt shear"].capacity.internal == pytest.approx(0.8 * 3 * 0.62 * 1040 * 314)
+    for older in ("AS 4100:1998", "NZS 3404"):
+        calc = tl.design(member(end=end), "250 kN", standard=older)
+        assert [line.title for line in calc.not_covered] == ["bolts of class 10.9"]

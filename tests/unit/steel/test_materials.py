@@ -161,7 +161,7 @@ def test_installed_tension_is_about_seven_tenths_of_the_strength(size, kN):
     ("name", "error", "says"),
     [
         ("M18 8.8/S", DataNotFoundError, "sizes are M12, M16"),
-        ("M20 10.9/S", DataNotFoundError, "classes 4.6, 8.8"),
+        ("M20 12.9/S", DataNotFoundError, "classes 4.6, 8.8, 10.9"),
         ("M20 8.8/X", DataNotFoundError, "categories S, TB, TF"),
         ("M20 4.6/TB", InputError, "class 4.6 is snug tight only, 'M20 4.6/S'"),
         ("M20", InputError, "size, class and category are due"),
