@@ -142,7 +142,8 @@ class GussetShape:
     def ray(self, u: float, v: float, du: float, dv: float) -> Hit:
         """From a point of the gusset, in a direction of unit length, to where the gusset ends.
 
-        A ray that only touches a corner or runs along an edge goes on. One that leaves where a
+        A ray that only touches a corner goes on, and so does one along an edge that its point lies
+        on; one that comes to an edge and would run along it ends there. One that leaves where a
         free and a supported edge meet leaves through the free one.
 
         Raises
@@ -169,11 +170,16 @@ class GussetShape:
             beyond = [h.distance for h in met[k:] if h not in there]
             if beyond:
                 middle = (hit.distance + beyond[0]) / 2
-                if self._holds((u + middle * du, v + middle * dv)):
+                on_the_way = (u + middle * du, v + middle * dv)
+                if self._holds(on_the_way) and not self._on_edge(on_the_way, hit):
                     continue
             return min(there, key=lambda h: h.edge in self.supported)
         # Off the outline by less than counts, and leaving.
         return Hit(0.0, self._nearest((u, v)).edge)
+
+    def _on_edge(self, point: Point, hit: Hit) -> bool:
+        """Whether a ray that has met the outline runs on along an edge: no plate lies beside it."""
+        return hit.distance > _SAME and self._nearest(point).distance < _SAME
 
     def _nearest(self, point: Point) -> Hit:
         """The edge nearest to a point."""

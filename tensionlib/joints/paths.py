@@ -160,51 +160,51 @@ class _Net:
             return self.path(self.heaviest())
         behind = self._behind(bolts)
         low, high = self._outside(bolts)
+        taken = np.arange(total + 1)
         best = np.full((n, total + 1), -np.inf)
         before = np.full((n, total + 1), -1)
         for j in range(n):
             best[j, low[j]] = self.own[j]
-            for i in range(j):
-                if not np.isfinite(self.adds[i, j]):
-                    continue
-                k = int(behind[i, j])
-                reached = best[i, : total + 1 - k] + self.adds[i, j]
-                better = reached > best[j, k:]
-                best[j, k:][better] = reached[better]
-                before[j, k:][better] = i
-        governing: tuple[float, int, int, float] | None = None
-        for j in range(n):
-            for k in range(total + 1 - int(high[j])):
-                left = gross - best[j, k]
-                carried = 1.0 - (k + high[j]) / total
-                if not np.isfinite(best[j, k]):
-                    continue
-                if left <= 0.0:
-                    raise InputError("gross: no area is left on a chain of holes; check the holes")
-                if governing is None or carried / left > governing[0] * (1 + 1e-12):
-                    governing = (carried / left, j, k, carried)
-        assert governing is not None
-        _, j, k, carried = governing
+            if j == 0:
+                continue
+            at = taken - behind[:j, j, None]  # bolts behind at the hole before, from row to column
+            reached = np.take_along_axis(best[:j], np.maximum(at, 0), axis=1)
+            reached = np.where(at >= 0, reached, -np.inf) + self.adds[:j, j, None]
+            most, source = reached.max(axis=0), reached.argmax(axis=0)
+            better = most > best[j]
+            best[j, better], before[j, better] = most[better], source[better]
+        if best.max() >= gross:
+            raise InputError(
+                f"gross: got {gross:g} mm²; more than {best.max():g} mm², what one chain of holes"
+                " loses, is due"
+            )
+        carried = 1.0 - (taken + high[:, None]) / total
+        ratio = np.where(np.isfinite(best), carried / (gross - best), -np.inf)
+        # Of equals the first, whatever the rounding.
+        governs = np.flatnonzero(ratio >= ratio.max() * (1 - 1e-12))[0]
+        j, k = (int(place) for place in np.unravel_index(governs, ratio.shape))
+        share = float(carried[j, k])
         chain = [j]
         while before[j, k] >= 0:
             i = int(before[j, k])
             j, k = i, k - int(behind[i, j])
             chain.append(i)
-        return self.path(chain[::-1], carried)
+        return self.path(chain[::-1], share)
 
     def _behind(self, bolts: npt.NDArray[np.bool_]) -> npt.NDArray[np.int64]:
         """Bolts behind the step from row to column, y above the row's and up to the column's."""
         out = np.zeros((self.n, self.n), dtype=np.int64)
+        # Whether the column's hole lies up to the row's hole, or in one line with it.
+        up_to, level = self.g <= _SAME, np.abs(self.g) <= _SAME
         for i in range(self.n):
-            for j in range(self.n):
-                g = self.g[i, j]
-                if g <= _SAME:
-                    continue
-                within = bolts & (self.y > self.y[i] + _SAME) & (self.y <= self.y[j] + _SAME)
-                line = self.x[i] + (self.x[j] - self.x[i]) * (self.y - self.y[i]) / g
-                line = np.where(self.y > self.y[j] - _SAME, self.x[j], line)
-                within &= self.x > line + _SAME
-                out[i, j] = int(within.sum())
+            to = np.flatnonzero(self.g[i] > _SAME)
+            if not to.size:
+                continue
+            slope = (self.x[to] - self.x[i]) / self.g[i, to]
+            line = self.x[i] + slope[:, None] * self.g[i]
+            line = np.where(level[to], self.x[to, None], line)
+            within = bolts & (self.g[i] > _SAME) & up_to[to] & (self.x > line + _SAME)
+            out[i, to] = within.sum(axis=1)
         return out
 
     def _outside(

@@ -6,12 +6,13 @@ The brute force, `tests/brute.py`, is written apart.
 from __future__ import annotations
 
 import math
+from dataclasses import replace
 from itertools import pairwise
 
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from tensionlib.joints.parts import Flat, Opening, opened_angle, opened_channel
+from tensionlib.joints.parts import Flat, Opening, Strip, opened_angle, opened_channel
 from tensionlib.joints.paths import least_path
 from tests.brute import area_lost, chains
 
@@ -43,12 +44,12 @@ def _behind(chain, holes) -> int:
 @st.composite
 def patterns(draw):
     part = draw(st.sampled_from(PARTS))
-    # A coarse grid makes lines and equal staggers likely; odd millimetres the rest.
-    grid = draw(st.sampled_from((1, 5, 35)))
+    # A coarse grid makes lines and equal staggers likely; the finer ones the rest.
+    grid = draw(st.sampled_from((0.37, 1, 5, 35)))
     most = int((part.width - 30) // grid)
     holes = []
-    for i in range(draw(st.integers(1, 8))):
-        x = 30.0 + grid * draw(st.integers(0, 300 // grid))
+    for i in range(draw(st.integers(1, 9))):
+        x = 30.0 + grid * draw(st.integers(0, int(300 // grid)))
         y = 15.0 + grid * draw(st.integers(0, most))
         if any((h.x, h.y) == (x, y) for h in holes):
             continue
@@ -56,6 +57,13 @@ def patterns(draw):
         along = draw(st.sampled_from((across, 50.0)))
         holes.append(Opening(str(i), x, y, across, along, draw(st.booleans())))
     return part, holes
+
+
+def turned(part, holes):
+    """The pattern seen from the other edge."""
+    width = part.width
+    strips = [Strip(s.name, width - s.high, width - s.low, s.t) for s in reversed(part.strips)]
+    return Flat(tuple(strips)), [replace(hole, y=width - hole.y) for hole in holes]
 
 
 @settings(max_examples=5000, deadline=None, derandomize=True)
@@ -95,8 +103,22 @@ def test_order_and_side_do_not_matter_and_a_hole_more_never_helps(pattern, rng):
     rng.shuffle(shuffled)
     assert least_path(part, shuffled).lost == lost
     assert least_path(part, holes[:-1]).lost <= lost + 1e-9
-    if len(part.strips) == 1:
-        mirrored = [
-            Opening(h.mark, h.x, part.width - h.y, h.across, h.along, h.bolt) for h in holes
-        ]
-        assert math.isclose(least_path(part, mirrored).lost, lost, rel_tol=1e-9)
+    assert math.isclose(least_path(*turned(part, holes)).lost, lost, rel_tol=1e-9)
+
+
+@settings(max_examples=300, deadline=None, derandomize=True)
+@given(patterns(), st.randoms(use_true_random=False), st.floats(3000.0, 9000.0))
+def test_with_credit_order_and_side_do_not_matter(pattern, rng, gross):
+    """A hole more may help: with a bolt in it, it takes a share."""
+    part, holes = pattern
+    gross += sum(h.across * 12.0 for h in holes)
+
+    def governing(part, holes):
+        path = least_path(part, holes, credit_behind=True, gross=gross)
+        return path.carried / (gross - path.lost)
+
+    shuffled = list(holes)
+    rng.shuffle(shuffled)
+    assert governing(part, shuffled) == governing(part, holes)
+    assert governing(part, holes) <= (1 + 1e-12) / (gross - least_path(part, holes).lost)
+    assert math.isclose(governing(*turned(part, holes)), governing(part, holes), rel_tol=1e-9)
