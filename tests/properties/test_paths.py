@@ -48,7 +48,7 @@ def patterns(draw):
     grid = draw(st.sampled_from((0.37, 1, 5, 35)))
     most = int((part.width - 30) // grid)
     holes = []
-    for i in range(draw(st.integers(1, 9))):
+    for i in range(draw(st.integers(1, 6) | st.integers(1, 9))):
         x = 30.0 + grid * draw(st.integers(0, int(300 // grid)))
         y = 15.0 + grid * draw(st.integers(0, most))
         if any((h.x, h.y) == (x, y) for h in holes):
@@ -66,7 +66,7 @@ def turned(part, holes):
     return Flat(tuple(strips)), [replace(hole, y=width - hole.y) for hole in holes]
 
 
-@settings(max_examples=5000, deadline=None, derandomize=True)
+@settings(max_examples=3500, deadline=None, derandomize=True)
 @given(patterns())
 def test_the_least_chain_is_the_least_of_all(pattern):
     part, holes = pattern

@@ -11,6 +11,7 @@ Known from: memory of the sources. Tolerance: as printed, half a unit of the las
 
 from __future__ import annotations
 
+from dataclasses import replace
 from typing import ClassVar
 
 import pytest
@@ -104,21 +105,19 @@ def test_trahair_2_7_1_both_flanges_of_a_column():
 class TestSegui37:
     """Segui 3.7: an 8 x 6 x 1/2 angle with staggered bolts in both legs, A_g = 6.80 in², holes of
     1 in. Lines 2 1/4 in and 2 1/2 in on from the heel of the 6 in leg (c, b), 3 in and 3 in on from
-    that of the 8 in leg (d, e); b and d stand 1 1/2 in farther in than c and e. Ten bolts: the
-    lines of b and d have three, those of c and e two; the chains need the innermost of each."""
+    that of the 8 in leg (d, e); b and d stand 1 1/2 in farther in than c and e. Ten bolts; that the
+    lines of b and d have three and those of c and e two, 3 in apart, is not known for certain: the
+    chains need only the innermost of each line, and the number."""
 
     A_g = 6.80
     angle = opened_angle(8 * IN, 6 * IN, 0.5 * IN)
     lines: ClassVar = {"b": 7.5 + 4.75, "c": 7.5 + 2.25, "d": 8.0 - 3.0, "e": 8.0 - 6.0}
 
-    def holes(self, *, without: str = "") -> list[Opening]:
-        """All ten; a line left `without` keeps its bolts in holes of no size."""
+    def holes(self) -> list[Opening]:
+        """All ten, the third of each line the innermost."""
         return [
             Opening.round(
-                f"{line}{row}",
-                (2.0 + 3.0 * row - (0.0 if line in "bd" else 1.5)) * IN,
-                y * IN,
-                (1e-9 if line in without else 1.0) * IN,
+                f"{line}{row}", (2.0 + 3.0 * row - (line in "ce") * 1.5) * IN, y * IN, 1.0 * IN
             )
             for line, y in self.lines.items()
             for row in ((1, 2, 3) if line in "bd" else (2, 3))
@@ -146,10 +145,19 @@ class TestSegui37:
         assert agrees(self.net(path), "5.80")
 
     def test_past_d_a_tenth_of_the_force_is_taken(self):
-        """Chain b c e: printed 5.413 in², and 6.014 in² for nine tenths of the force."""
-        path = least_path(
-            self.angle, self.holes(without="d"), credit_behind=True, gross=self.A_g * IN**2
-        )
+        """Chain b c e: printed 5.413 in², and 6.014 in² for nine tenths of the force.
+
+        So that it governs, d3 stands far behind it and d1 and d2 take nothing from the section.
+        """
+        group = [
+            replace(hole, x=40.0 * IN)
+            if hole.mark == "d3"
+            else replace(hole, across=1e-9)
+            if hole.mark in ("d1", "d2")
+            else hole
+            for hole in self.holes()
+        ]
+        path = least_path(self.angle, group, credit_behind=True, gross=self.A_g * IN**2)
         assert [hop.hole.mark for hop in path.hops] == ["e3", "c3", "b3"]
         assert path.carried == pytest.approx(0.9)
         # Printed 5.413 from 5.4125: a tie, which may have gone either way.
