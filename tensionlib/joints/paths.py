@@ -74,7 +74,7 @@ def least_path(
     Raises
     ------
     InputError
-        For credit without a gross area, or on a part no chain leaves anything of.
+        For credit without a gross area, or with one that a chain of holes takes whole.
     """
     if not holes:
         return NetPath((), 0.0)
@@ -167,7 +167,7 @@ class _Net:
             best[j, low[j]] = self.own[j]
             if j == 0:
                 continue
-            at = taken - behind[:j, j, None]  # bolts behind at the hole before, from row to column
+            at = taken - behind[:j, j, None]  # how many were behind the chain at the hole before
             reached = np.take_along_axis(best[:j], np.maximum(at, 0), axis=1)
             reached = np.where(at >= 0, reached, -np.inf) + self.adds[:j, j, None]
             most, source = reached.max(axis=0), reached.argmax(axis=0)
@@ -180,9 +180,7 @@ class _Net:
             )
         carried = 1.0 - (taken + high[:, None]) / total
         ratio = np.where(np.isfinite(best), carried / (gross - best), -np.inf)
-        # Of equals the first, whatever the rounding.
-        governs = np.flatnonzero(ratio >= ratio.max() * (1 - 1e-12))[0]
-        j, k = (int(place) for place in np.unravel_index(governs, ratio.shape))
+        j, k = (int(place) for place in np.unravel_index(ratio.argmax(), ratio.shape))
         share = float(carried[j, k])
         chain = [j]
         while before[j, k] >= 0:
@@ -194,15 +192,13 @@ class _Net:
     def _behind(self, bolts: npt.NDArray[np.bool_]) -> npt.NDArray[np.int64]:
         """Bolts behind the step from row to column, y above the row's and up to the column's."""
         out = np.zeros((self.n, self.n), dtype=np.int64)
-        # Whether the column's hole lies up to the row's hole, or in one line with it.
-        up_to, level = self.g <= _SAME, np.abs(self.g) <= _SAME
+        up_to = self.g <= _SAME  # the column's hole lies below the row's, or in one line with it
         for i in range(self.n):
             to = np.flatnonzero(self.g[i] > _SAME)
             if not to.size:
                 continue
             slope = (self.x[to] - self.x[i]) / self.g[i, to]
             line = self.x[i] + slope[:, None] * self.g[i]
-            line = np.where(level[to], self.x[to, None], line)
             within = bolts & (self.g[i] > _SAME) & up_to[to] & (self.x > line + _SAME)
             out[i, to] = within.sum(axis=1)
         return out

@@ -131,6 +131,26 @@ def test_of_equals_the_straight_step_past_a_hole():
     assert (marks(path), path.lost) == ("ac", 432.0)
 
 
+def test_of_equals_the_chain_with_fewer_holes_before_the_one_nearer_the_body():
+    """Two of 22 in line lose 528, and so does a slot of 44 a hundred millimetres and more away."""
+    group = [hole("a", 160.0, 45.0), hole("b", 160.0, 105.0), Opening("c", 40.0, 105.0, 44.0, 22.0)]
+    path = least_path(PLATE, group)
+    assert (marks(path), path.lost) == ("c", 528.0)
+
+
+def test_of_equals_the_fewer_holes_on_the_way():
+    """To d at (100, 110) the step is 60 over 50 from b and from c alike, and gives back 216 of 264.
+    a and b in line lose 2·216 = 432, the slot c alone 36·12 = 432."""
+    group = [
+        hole("a", 40.0, 20.0, 18.0),
+        hole("b", 40.0, 60.0, 18.0),
+        Opening("c", 160.0, 60.0, 36.0, 18.0),
+        hole("d", 100.0, 110.0),
+    ]
+    path = least_path(PLATE, group)
+    assert (marks(path), path.lost) == ("cd", 480.0)
+
+
 def test_of_equals_the_one_nearest_the_body_in_any_order():
     """Two rows alike: the inner row has the whole force to carry."""
     group = [hole("a", 40, 45), hole("b", 40, 105), hole("c", 180, 45), hole("d", 180, 105)]
@@ -283,6 +303,13 @@ def test_from_the_outer_holes_to_the_edges_a_chain_goes_straight_across(y):
     ahead = least_path(PLATE, [*slots, hole("c", 20.0, y, 1.0)], credit_behind=True, gross=1800.0)
     assert (marks(behind), behind.carried) == ("ab", pytest.approx(2 / 3))
     assert (marks(ahead).replace("c", ""), ahead.carried) == ("ab", 1.0)
+
+
+def test_with_credit_too_a_step_that_gains_nothing_is_not_taken():
+    """The same 216 by b alone as by a and b, with no bolt behind either."""
+    pair = [hole("a", 40.0, 40.0, 18.0), hole("b", 100.0, 90.0, 18.0)]
+    path = least_path(PLATE, pair, credit_behind=True, gross=1800.0)
+    assert (marks(path), path.lost, path.carried) == ("b", 216.0, 1.0)
 
 
 def test_the_gross_area_is_asked_for():
