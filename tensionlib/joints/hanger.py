@@ -61,4 +61,4 @@ class Hanger(Stated):
         if turned.internal > 1.5:
             raise InputError("angle: 85 degrees from the bolts' axis at most; else they only shear")
         object.__setattr__(self, "angle", turned)
-        object.__setattr__(self, "prying", factor("prying", self.prying, at_most=2.0))
+        object.__setattr__(self, "prying", factor("prying", self.prying, at_least=0.0, at_most=2.0))

@@ -14,6 +14,7 @@ from types import MappingProxyType
 from typing import TYPE_CHECKING, Any
 
 from tensionlib.errors import TensionlibError, did_you_mean
+from tensionlib.members.beside import Across, Overstrength
 from tensionlib.package.files.fields import KnownNames, named
 from tensionlib.package.files.locate import Lines, dotted
 from tensionlib.package.files.locate import Path as KeyPath
@@ -37,13 +38,13 @@ from tensionlib.package.files.records import (
     written,
 )
 from tensionlib.package.files.schedule import ENDS, Setup, no_end, rows_of
-from tensionlib.package.files.shaped import KINDS, beside_of
+from tensionlib.package.files.shaped import KINDS
 from tensionlib.quantities import Quantity
 
 if TYPE_CHECKING:
-    from pydantic import BaseModel
-
     from tensionlib.package.files import schema
+    from tensionlib.package.files.end_tables import EndTables
+    from tensionlib.package.files.typed import Table
 
 _TOML_PLACE = re.compile(r"\s*\(at (?:line (\d+), column (\d+)|end of document)\)$")
 
@@ -185,7 +186,7 @@ class CheckedText:
 
     # One table at a time, so that a fault in one hides none in another
 
-    def _piece(self, model: type[BaseModel], path: KeyPath, *, needed: bool = True) -> Any:
+    def _piece(self, model: type[Table], path: KeyPath, *, needed: bool = True) -> Any:
         """A table checked against its model, or None after telling what is wrong with it."""
         if path[0] not in self._raw:
             if needed:
@@ -205,24 +206,28 @@ class CheckedText:
 
     def _tell_pydantic(self, error: dict[str, Any], base: KeyPath) -> None:
         """Turn one of pydantic's errors into a problem in our words."""
-        from tensionlib.package.files import schema
+        from tensionlib.package.files.end_tables import TAGS, example_of
+        from tensionlib.package.files.typed import TogetherError
 
-        path = (*base, *(step for step in error["loc"] if step not in schema.TAGS))
+        path = (*base, *(step for step in error["loc"] if step not in TAGS))
         value = error["input"]
         kind = error["type"]
         if kind == "extra_forbidden":
             self._unknown(path, self._model_at(path[:-1]))
         elif kind == "missing":
-            example = self._model_at(path[:-1]).model_fields[str(path[-1])].examples
-            written_so = f"; write {path[-1]} = {_toml(example[0])}" if example else ""
+            example = example_of(self._model_at(path[:-1]), str(path[-1]))
+            written_so = "" if example is None else f"; write {path[-1]} = {_toml(example)}"
             self._tell(path, "", f"missing{written_so}", True)
         elif kind == "union_tag_not_found":
             self._tell_kind(path, value)
+        elif kind == "value_error" and isinstance(error["ctx"]["error"], TogetherError):
+            self._tell_together(path, self._model_at(path), error["ctx"]["error"])
         elif kind == "value_error":
             self._tell(path, value, str(error["ctx"]["error"]))
         else:
             due = {
                 "string_type": "text in quotation marks",
+                "bool_type": "true or false",
                 "list_type": "a list",
                 "dict_type": "a table",
                 "model_type": "a table",
@@ -230,6 +235,25 @@ class CheckedText:
             }
             got = f"got {shown(value)}; "
             self._tell(path, value, f"{got}{due[kind]} is due" if kind in due else error["msg"])
+
+    def _tell_together(self, path: KeyPath, model: type[Table], error: TensionlibError) -> None:
+        """Tell of fields that do not go together, by the message of the object they were to make.
+
+        It begins with the field, as the door's do; "plate.width" is a field of a table in it.
+        """
+        field = str(error).partition(": ")[0]
+        steps = tuple(field.split("."))
+        known = steps[0] in model.model_fields
+        place = (*path, *steps) if known else path
+        there = known and self._lines.has(place)
+        value = self._raw_at(place) if there else ""
+        self._tell(place, value, reason_of(error, field) if known else str(error), not there)
+
+    def _raw_at(self, path: KeyPath) -> Any:
+        found: Any = self._raw
+        for step in path:
+            found = found[step]
+        return found
 
     def _tell_kind(self, path: KeyPath, value: object) -> None:
         *others, last = (f'"{kind}"' for kind in sorted(KINDS))
@@ -243,14 +267,14 @@ class CheckedText:
             near = did_you_mean(kind, sorted(KINDS)) if isinstance(kind, str) else ""
             self._tell((*path, "kind"), kind, f"got {shown(kind)}; {due}.{near}".removesuffix("."))
 
-    def _unknown(self, path: KeyPath, model: type[BaseModel]) -> None:
+    def _unknown(self, path: KeyPath, model: type[Table]) -> None:
         keys = list(model.model_fields)
         near = did_you_mean(str(path[-1]), keys) or f" Keys here are {', '.join(keys)}."
         self._tell(path, "", f"unknown key.{near}", True)
 
-    def _model_at(self, path: KeyPath) -> type[BaseModel]:
+    def _model_at(self, path: KeyPath) -> type[Table]:
         """The model of the table that stands at a path."""
-        from tensionlib.package.files import schema
+        from tensionlib.package.files import end_tables, schema
 
         match path:
             case ("project",):
@@ -267,23 +291,30 @@ class CheckedText:
                 return schema.DefaultsTable
             case ("members", _):
                 return schema.MemberTable
+            case ("members", _, "across"):
+                return end_tables.AcrossTable
+            case ("members", _, "overstrength"):
+                return end_tables.OverstrengthTable
+            case ("ends", _) | ("members", _, _):
+                return end_tables.BY_KIND[self._raw_at(path)["kind"]]
             case (*_, "plate"):
-                return schema.GussetTable
-        table: Any = self._raw
-        for step in path:
-            table = table[step]
-        models: dict[str, type[BaseModel]] = {
-            "bolted": schema.BoltedTable,
-            "welded": schema.WeldedTable,
-        }
-        return models.get(table["kind"], schema.ShapedTable)
+                return end_tables.GussetTable
+            case (*_, "plate", "hanger"):
+                return end_tables.HangerTable
+            case (*_, "plate", "shape"):
+                return end_tables.ShapeTable
+            case (*_, "runs", _):
+                return end_tables.RunTable
+        lines = end_tables.are_lines(self._raw_at(path))
+        return end_tables.LinesTable if lines else end_tables.HoleTable
 
     def _check_name(self, path: KeyPath, name: str, field: str) -> bool:
         """Whether a section, steel, bolt, weld metal or standard is known."""
         try:
             self._known.check(field, name)
         except TensionlibError as error:
-            self._tell(path, name, reason_of(error, field))
+            # The catalogue knows a steel by that word alone, whatever it is for.
+            self._tell(path, name, reason_of(error, field.removeprefix("sleeve_")))
             return False
         return True
 
@@ -337,7 +368,7 @@ class CheckedText:
 
     def _ends(self) -> dict[str, EndDetail | None]:
         """The ends by name; one that is not sound is None, so that its users are not blamed."""
-        from tensionlib.package.files import schema
+        from tensionlib.package.files.end_tables import EndTable
 
         raw = self._raw.get("ends", {})
         if not isinstance(raw, dict):
@@ -352,33 +383,26 @@ class CheckedText:
                 self._tell(path, name, f"the name of an end: {error}")
             if isinstance(table, dict):
                 self._check_names(table, path)
-                ends[name] = self._end(self._validated(schema.EndTable, table, path), name, path)
+                ends[name] = self._end(self._validated(EndTable, table, path), name, path)
             else:
                 self._tell(path, table, f"got {shown(table)}; a table [ends.{name}] is due")
                 ends[name] = None
         return ends
 
-    def _end(
-        self,
-        made: schema.BoltedTable | schema.WeldedTable | schema.ShapedTable | None,
-        name: str,
-        path: KeyPath,
-    ) -> EndDetail | None:
+    def _end(self, made: EndTables | None, name: str, path: KeyPath) -> EndDetail | None:
         """An end whose fields are each sound, checked as a whole."""
         if made is None:
             return None
         detail = EndDetail(
-            name, made.kind, _stated(made, but=("kind", "plate")), _stated(made.plate)
+            name,
+            made.kind,
+            tuple(made.stated(but=("kind", "plate")).items()),
+            tuple(made.plate.stated().items()),
         )
         try:
             detail.end()
-        except TensionlibError as error:  # its message begins with the field, as the door's do
-            field = str(error).partition(": ")[0]
-            known = field in type(made).model_fields or field in (made.model_extra or {})
-            place = (*path, field) if known else path
-            reason = reason_of(error, field) if known else str(error)
-            value = getattr(made, field) if known else ""
-            self._tell(place, value, reason, absent=not known or not self._lines.has(place))
+        except TensionlibError as error:
+            self._tell_together(path, type(made), error)
             return None
         return detail
 
@@ -430,18 +454,7 @@ class CheckedText:
         end_1, end_2 = found[0], found[-1]
         if end_1 is None or end_2 is None:
             return None
-        beside = {}
-        for key in ("across", "overstrength"):
-            if (table := getattr(made, key)) is not None:
-                try:
-                    beside[key] = beside_of(key, table)
-                except TensionlibError as error:
-                    self._tell((*path, key), table, reason_of(error, key))
-                    return None
         return MemberRow(
-            service_force=made.service_force,
-            ties=made.ties,
-            **beside,
             mark=made.mark,
             title=made.title,
             section=made.section,
@@ -452,6 +465,12 @@ class CheckedText:
             end_2=end_2,
             origin=f"{self._path.name} line {self._lines.line(path)}",
             standard=made.standard,
+            service_force=made.service_force,
+            ties=made.ties,
+            across=Across(**made.across.stated()) if made.across else None,
+            overstrength=(
+                Overstrength(**made.overstrength.stated()) if made.overstrength else None
+            ),
         )
 
     def _end_of(
@@ -467,7 +486,7 @@ class CheckedText:
         ends: Mapping[str, EndDetail | None],
     ) -> tuple[ScheduleSettings | None, ScheduleRows]:
         defaults: dict[str, str | Quantity | None] = {}
-        for column, value in _stated(made.defaults):
+        for column, value in made.defaults.stated().items():
             path = ("schedule", "defaults", column)
             defaults[column] = value if isinstance(value, str | Quantity) else None
             if column in ENDS and value not in ends:
@@ -475,14 +494,14 @@ class CheckedText:
                 defaults[column] = None
             elif isinstance(value, str) and not self._check_name(path, value, column):
                 defaults[column] = None
-        columns = {column: str(header) for column, header in _stated(made.columns)}
+        columns = {column: str(header) for column, header in made.columns.stated().items()}
         settings = ScheduleSettings(
             file=made.file,
             sheet=made.sheet,
             columns=MappingProxyType(columns),
             ignore=tuple(made.ignore),
             defaults=MappingProxyType(
-                {key: str(written(value)) for key, value in _stated(made.defaults)}
+                {key: str(written(value)) for key, value in made.defaults.stated().items()}
             ),
         )
         if not _stays_inside(made.file):
@@ -505,13 +524,6 @@ class CheckedText:
         return settings, rows_of(self._path.parent / made.file, made.file, setup)
 
 
-def _stated(made: BaseModel, but: tuple[str, ...] = ()) -> tuple[tuple[str, Any], ...]:
-    """The fields that the file states, in the order of the model."""
-    own = (key for key in type(made).model_fields if key in made.model_fields_set)
-    keys = (*own, *(made.model_extra or {}))
-    return tuple((key, getattr(made, key)) for key in keys if key not in but)
-
-
 def _project(made: schema.ProjectTable) -> Project:
     plain = {
         one.name: getattr(made, one.name)
@@ -532,7 +544,7 @@ def _stays_inside(file: str) -> bool:
     return not os.path.normpath(file).startswith("..")
 
 
-def _needs(model: type[BaseModel]) -> str:
+def _needs(model: type[Table]) -> str:
     needed = [key for key, field in model.model_fields.items() if field.is_required()]
     return f" with {' and '.join(needed)}" if needed else ""
 
@@ -541,6 +553,8 @@ def _toml(value: object) -> str:
     """An example value as TOML writes it."""
     if isinstance(value, dict):
         return "{ " + ", ".join(f"{key} = {_toml(one)}" for key, one in value.items()) + " }"
+    if isinstance(value, list):
+        return "[" + ", ".join(map(_toml, value)) + "]"
     return json.dumps(value, ensure_ascii=False)
 
 

@@ -49,6 +49,7 @@ class KnownNames:
         looked_up = {
             "section": self.section,
             "steel": self.steel,
+            "sleeve_steel": self.steel,
             "bolts": self.bolts,
             "metal": self.metal,
             "standard": self.standard,
@@ -92,11 +93,6 @@ def take_length(field: str, value: object, example: str = LENGTH_EXAMPLE) -> Qua
         For anything else, with the reason and an example that works.
     """
     return _taken(lambda: door(field, value, LENGTH, above=0.0, example=repr(example)), field)
-
-
-def take_length_or_zero(field: str, value: object, example: str) -> Quantity:
-    """A length of zero or more."""
-    return _taken(lambda: door(field, value, LENGTH, at_least=0.0, example=repr(example)), field)
 
 
 def take_force(field: str, value: object) -> Quantity:

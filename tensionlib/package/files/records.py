@@ -8,7 +8,8 @@ from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from tensionlib.package.files.problems import Problem
-from tensionlib.quantities import FORCE, Quantity, parse
+from tensionlib.quantities import ANGLE, Quantity, parse
+from tensionlib.quantities.roles import unit_text
 
 if TYPE_CHECKING:
     from tensionlib.members.beside import Across, Overstrength
@@ -66,10 +67,10 @@ class EndDetail:
     kind : str
         "bolted", "bolted pattern", "welded", "welded runs", "pinned" or "rod".
     stated : tuple of (name, value)
-        The fields that were stated, lengths of a regular end as Quantity. What was left out is not
-        here: the connection takes its own default for it.
+        The fields that were stated, dimensions as Quantity, holes and runs as lists of dicts. What
+        was left out is not here: the connection takes its own default for it.
     plate : tuple of (name, value)
-        The fields of the gusset that were stated.
+        The fields of the gusset that were stated, its hanger and its shape as dicts.
     """
 
     name: str
@@ -193,7 +194,10 @@ def written(value: Any) -> Any:
     if not isinstance(value, Quantity):
         return value
     # Twelve significant figures are what a quantity carries; a division may cost the last of them.
-    text = f"{value.internal / value.unit.size:.12g} {value.unit.name}"
-    if parse(text).internal == value.internal:
-        return text
-    return f"{value.internal:.12g} {'N' if value.role is FORCE else 'mm'}"
+    for figures in (11, 12):
+        text = f"{value.internal / value.unit.size:.{figures}g} {value.unit.name}"
+        if parse(text).internal == value.internal:
+            return text
+    role = value.role
+    unit = "rad" if role is ANGLE else unit_text((("N", role.force), ("mm", role.length)))
+    return f"{value.internal:.12g} {unit}"

@@ -429,7 +429,7 @@ class _Reader:
             end_2=taken["end_2"] if "end_2" in taken else taken["end"],
             origin=f"{self._name} row {number}",
             standard=taken["standard"],
-            service_force=taken["service_force"] or None,
+            service_force=None if taken["service_force"] == "" else taken["service_force"],
         )
 
     def _take(self, column: str, cell: Cell, required: bool) -> object:

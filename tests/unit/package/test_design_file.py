@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import difflib
+import inspect
 import json
 import os
 import pickle
@@ -22,6 +23,11 @@ from hypothesis import strategies as st
 
 from tensionlib.errors import DataNotFoundError, InputError, did_you_mean
 from tensionlib.joints.ends import Bolted, Gusset, Welded
+from tensionlib.joints.gusset_shape import GussetShape
+from tensionlib.joints.hanger import Hanger
+from tensionlib.joints.holes import Hole, Pattern
+from tensionlib.joints.welded_runs import FilletRun
+from tensionlib.members.beside import Across, Overstrength
 from tensionlib.package.files import (
     LARGEST_FILE,
     DesignFile,
@@ -31,6 +37,7 @@ from tensionlib.package.files import (
     MemberRow,
     Problem,
     atomic,
+    end_tables,
     project_record,
     read_design_file,
     schema,
@@ -38,7 +45,16 @@ from tensionlib.package.files import (
 )
 from tensionlib.package.files.locate import Lines, dotted
 from tensionlib.package.files.records import written
-from tensionlib.quantities import FORCE, LENGTH, Quantity, parse
+from tensionlib.package.files.shaped import KINDS
+from tensionlib.quantities import (
+    ANGLE,
+    FORCE,
+    LENGTH,
+    STRESS,
+    WEIGHT_PER_LENGTH,
+    Quantity,
+    parse,
+)
 from tensionlib.units import kN, mm
 
 DOCS = Path(__file__).parents[3] / "docs"
@@ -217,17 +233,48 @@ def test_an_end_gives_the_arguments_of_its_connection(folder: Path) -> None:
 
 def test_the_fields_of_an_end_are_those_of_its_connection() -> None:
     for table, connection in (
-        (schema.BoltedTable, Bolted),
-        (schema.WeldedTable, Welded),
-        (schema.GussetTable, Gusset),
+        *((end_tables.BY_KIND[kind], made) for kind, made in KINDS.items()),
+        (end_tables.GussetTable, Gusset),
+        (end_tables.HangerTable, Hanger),
+        (end_tables.ShapeTable, GussetShape),
+        (end_tables.HoleTable, Hole),
+        (end_tables.RunTable, FilletRun),
+        (end_tables.AcrossTable, Across),
+        (end_tables.OverstrengthTable, Overstrength),
     ):
-        # The number of cover plates tells them from a gusset.
-        assert set(table.model_fields) - {"kind", "number"} == {
-            field.name for field in fields(connection)
-        } - {"kind"}
+        # The kind of an end tells its table, and the number of cover plates tells them from a
+        # gusset.
+        extra = {"kind"} if table in end_tables.BY_KIND.values() else set()
+        extra |= {"number"} if table is end_tables.GussetTable else set()
+        names = {field.name for field in fields(connection)}
+        assert set(table.model_fields) - extra == names, table
         required = {name for name, field in table.model_fields.items() if field.is_required()}
         due = {f.name for f in fields(connection) if "MISSING" in repr(f.default)}
-        assert required - {"kind"} == due
+        assert required - extra == due, table
+
+
+def test_the_defaults_of_a_table_are_those_of_its_connection() -> None:
+    for table, connection in (
+        *((end_tables.BY_KIND[kind], made) for kind, made in KINDS.items()),
+        (end_tables.GussetTable, Gusset),
+        (end_tables.HangerTable, Hanger),
+        (end_tables.HoleTable, Hole),
+        (end_tables.AcrossTable, Across),
+        (end_tables.OverstrengthTable, Overstrength),
+    ):
+        for field in fields(connection):
+            mine = table.model_fields[field.name]
+            if not mine.is_required() and mine.default is not None:
+                assert mine.default == field.default, (table, field.name)
+
+
+def test_lines_of_holes_take_the_arguments_of_the_pattern() -> None:
+    there = inspect.signature(Pattern.lines).parameters
+    assert set(end_tables.LinesTable.model_fields) == set(there)
+    due = {name for name, one in there.items() if one.default is inspect.Parameter.empty}
+    assert due == {
+        name for name, one in end_tables.LinesTable.model_fields.items() if one.is_required()
+    }
 
 
 def test_an_end_may_stand_inside_its_member(folder: Path) -> None:
@@ -1273,8 +1320,13 @@ def test_quantities_are_written_with_their_unit(folder: Path) -> None:
 def test_a_written_length_reads_as_the_same_number(size: float, unit: str) -> None:
     quantity = Quantity(size, LENGTH).to(unit)
     assert parse(str(written(quantity))).internal == quantity.internal
-    force = Quantity(size, FORCE).to("kip")
-    assert parse(str(written(force))).internal == force.internal
+    for quantity in (
+        Quantity(size, FORCE).to("kip"),
+        Quantity(size, STRESS).to("ksi"),
+        Quantity(size, WEIGHT_PER_LENGTH).to("lbf/ft"),
+        Quantity(size, ANGLE).to("deg"),
+    ):
+        assert parse(str(written(quantity))).internal == quantity.internal
 
 
 def test_members_are_changed_added_and_taken_out_by_mark(folder: Path) -> None:
@@ -1546,9 +1598,15 @@ def test_the_documents_name_every_key() -> None:
         schema.ProjectTable,
         schema.RevisionTable,
         schema.StandardTable,
-        schema.BoltedTable,
-        schema.WeldedTable,
-        schema.GussetTable,
+        *end_tables.BY_KIND.values(),
+        end_tables.GussetTable,
+        end_tables.HangerTable,
+        end_tables.ShapeTable,
+        end_tables.HoleTable,
+        end_tables.LinesTable,
+        end_tables.RunTable,
+        end_tables.AcrossTable,
+        end_tables.OverstrengthTable,
         schema.MemberTable,
         schema.ScheduleTable,
         schema.DesignFileTables,
