@@ -41,6 +41,7 @@ if TYPE_CHECKING:
     from tensionlib.joints.welded_runs import balanced_lengths as balanced_lengths
     from tensionlib.members.beside import Across as Across
     from tensionlib.members.beside import Overstrength as Overstrength
+    from tensionlib.members.brief import Brief as Brief
     from tensionlib.members.design import design as design
     from tensionlib.members.drawings import drawings as drawings
     from tensionlib.members.member import Member as Member
@@ -62,6 +63,7 @@ _WHERE = {
     "Across": "members.beside",
     "Bolted": "joints.ends",
     "BoltedPattern": "joints.pattern_end",
+    "Brief": "members.brief",
     "Calculation": "calculation.result",
     "Check": "calculation.result",
     "Constant": "calculation.formula",

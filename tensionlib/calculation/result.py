@@ -110,6 +110,8 @@ class Calculation:
     draw: Callable[[], tuple[Sketch, ...]] | None = None
     view: View = METRIC
     version: str = ""
+    brief: Any = None
+    """What was asked, as the layers above state it; None for a working of the user's own."""
 
     @classmethod
     def of(cls, work: Working, heading: Heading, **more: Any) -> Calculation:

@@ -13,6 +13,7 @@ from tensionlib.joints.pattern_end import BoltedPattern
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.book import Case, Filling, Written, fill
+from tensionlib.members.brief import Brief
 from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
 from tensionlib.members.resolve import end_inputs, member_inputs
@@ -93,6 +94,7 @@ def design(
         for i, end in enumerate(member.ends, start=1)
     )
     inputs = member_inputs(member, served)
+    brief = None
     if isinstance(force, Entry):
         work, N_star = _continued(force, chosen.notation)
         chosen.design(work, inputs, ends, N_star)
@@ -102,6 +104,7 @@ def design(
     else:
         number = door("force", force, FORCE, example="285 kN").internal
         _refuse_compression(number)
+        brief = Brief(member, force, standard, service, origin, view)
         filling = fill(Case(chosen, Number(number, origin), inputs, ends))
         at = 0
     symbol = filling.written.sheet.lines[at].symbol
@@ -126,6 +129,7 @@ def design(
         draw=lambda: sketches(member, chosen, label, holes),
         view=view,
         version=__version__,
+        brief=brief,
     )
 
 

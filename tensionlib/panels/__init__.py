@@ -1,0 +1,1 @@
+"""Widgets for a notebook: choose, compare, sweep."""

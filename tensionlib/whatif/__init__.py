@@ -1,0 +1,1 @@
+"""Alternatives on arrays, solving, sensitivity, as built, few standard details."""
