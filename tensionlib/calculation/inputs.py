@@ -27,7 +27,8 @@ class Inputs:
 
     A walk reads choices as text and takes numbers only as entries, so that no number can steer
     it but through a condition that is printed. `parts` are inputs of what this is made of, such
-    as the steps of a chain of holes, each with a prefix of its own.
+    as the steps of a chain of holes, each with a prefix of its own. `words` are printed and never
+    branched on: two that differ in words alone are worked out alike.
     """
 
     choices: Mapping[str, str]
@@ -35,18 +36,36 @@ class Inputs:
     tables: Mapping[str, tuple[ThresholdTable, str]] = field(default_factory=dict)
     prefix: str = ""
     parts: Mapping[str, tuple[Inputs, ...]] = field(default_factory=dict)
+    words: Mapping[str, str] = field(default_factory=dict)
     _kept: dict[str, Entry] = field(default_factory=dict, repr=False, compare=False)
 
     @property
     def signature(self) -> Hashable:
-        """All of this that can steer a walk: choices, which numbers are stated, tables' rows."""
+        """All of this that a walk writes down: what can steer it, and its words."""
         return (
             self.prefix,
             tuple(self.choices.items()),
             frozenset(self._numbers),
             tuple((name, table.name, row) for name, (table, row) in self.tables.items()),
             tuple((name, tuple(p.signature for p in parts)) for name, parts in self.parts.items()),
+            tuple(self.words.items()),
         )
+
+    @property
+    def steering(self) -> Hashable:
+        """All of this that can steer a walk: choices, which numbers are stated, tables' rows."""
+        return (
+            self.prefix,
+            tuple(self.choices.items()),
+            frozenset(self._numbers),
+            tuple((name, table.name, row) for name, (table, row) in self.tables.items()),
+            tuple((name, tuple(p.steering for p in parts)) for name, parts in self.parts.items()),
+        )
+
+    @property
+    def own(self) -> Mapping[str, Number]:
+        """The numbers of this alone, by name: for merging, never for a walk."""
+        return self._numbers
 
     def numbers(self) -> dict[str, Number]:
         """The numbers by the key each has on a sheet: for filling, never for a walk."""
@@ -63,6 +82,10 @@ class Inputs:
             raise DataNotFoundError(
                 f"choice: {name!r} is not among {sorted(self.choices)}"
             ) from None
+
+    def word(self, name: str) -> str:
+        """Words to print, "" where there are none."""
+        return self.words.get(name, "")
 
     def has(self, name: str) -> bool:
         """Whether the number was stated at all: a choice of the user's, not its size."""

@@ -2,6 +2,9 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+from typing import cast
+
 from tensionlib.calculation.inputs import Number
 from tensionlib.calculation.result import Calculation, Heading
 from tensionlib.calculation.sheet import Entry
@@ -14,9 +17,9 @@ from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import WeldedRuns
 from tensionlib.members.book import Case, Filling, Written, fill
 from tensionlib.members.brief import Brief
-from tensionlib.members.geometry import check_fit, seat
 from tensionlib.members.member import Member
-from tensionlib.members.resolve import end_inputs, member_inputs
+from tensionlib.members.pieces import END_NAMES, Given, gather
+from tensionlib.members.resolve import MEMBER_PIECES, whole_end
 from tensionlib.members.sketching import sketches
 from tensionlib.quantities import (
     FORCE,
@@ -80,24 +83,11 @@ def design(
     if service is not None:
         number = door("service", service, FORCE, at_least=0.0, example="150 kN").internal
         served = Number(number, "given")
-    holes = _fitting_holes(member, chosen)
-    two = len(member.ends) == 2
-    ends = tuple(
-        end_inputs(
-            member,
-            end,
-            chosen,
-            service=served,
-            label=f"End {i}: " if two else "",
-            prefix=f"end {i}: " if two else "end: ",
-        )
-        for i, end in enumerate(member.ends, start=1)
-    )
-    inputs = member_inputs(member, served)
+    case = case_of(member, chosen, served)
     brief = None
     if isinstance(force, Entry):
         work, N_star = _continued(force, chosen.notation)
-        chosen.design(work, inputs, ends, N_star)
+        chosen.design(work, case.member, case.ends, N_star)
         written = Written(work.sheet(), tuple(work.assumptions), tuple(work.not_checked))
         filling = Filling(written, tuple(work.values), dict(work.origins))
         at = N_star.index
@@ -105,12 +95,12 @@ def design(
         number = door("force", force, FORCE, example="285 kN").internal
         _refuse_compression(number)
         brief = Brief(member, force, standard, service, origin, view)
-        filling = fill(Case(chosen, Number(number, origin), inputs, ends))
+        filling = fill(replace(case, force=Number(number, origin)))
         at = 0
     symbol = filling.written.sheet.lines[at].symbol
     assert symbol is not None
     label = f"{symbol.text} = {format_value(filling.values[at], FORCE, view, SUMMARY_FIGURES)}"
-    same = () if two else ("both ends are connected in the same way",)
+    same = () if len(case.ends) == 2 else ("both ends are connected in the same way",)
     return Calculation(
         sheet=filling.written.sheet,
         values=filling.values,
@@ -126,7 +116,7 @@ def design(
         assumptions=filling.written.assumptions + same,
         not_checked=filling.written.not_checked,
         sources=((chosen.source, "member and connection design"), *_materials(member)),
-        draw=lambda: sketches(member, chosen, label, holes),
+        draw=lambda: sketches(member, chosen, label, _holes(member, chosen)),
         view=view,
         version=__version__,
         brief=brief,
@@ -156,18 +146,36 @@ def _refuse_compression(force: float) -> None:
         )
 
 
-def _fitting_holes(member: Member, chosen: Standard) -> tuple[float, ...]:
-    """Hole diameter of each end in mm, 0 for a welded one; refuses holes that do not fit."""
+def case_of(member: Member, standard: Standard, service: Number | None) -> Case:
+    """What a member puts to a standard, no force stated yet. Raises as `design`."""
+    ends = member.ends
+    given = Given(
+        standard=standard,
+        section=member.profile,
+        steel=member.material,
+        length=cast(Quantity, member.length),
+        across=member.across,
+        overstrength=member.overstrength,
+        ties=cast(Quantity | None, member.ties),
+        service=service,
+    )
+    made = tuple(
+        whole_end(replace(given, end=end, label=label, prefix=prefix))
+        for end, (label, prefix) in zip(ends, END_NAMES[len(ends)], strict=True)
+    )
+    return Case(standard, Number(0.0, "given"), gather(MEMBER_PIECES, given), made)
+
+
+def _holes(member: Member, chosen: Standard) -> tuple[float, ...]:
+    """Hole diameter of each end in mm, 0 for a welded one."""
     holes = []
     for end in member.ends:
         hole = 0.0
         if isinstance(end, Bolted | BoltedPattern):
             d_f = bolt(end.bolts).d_f
             hole, _ = chosen.hole_size(d_f, "standard")
-        if isinstance(end, Bolted):
-            if end.clearance is not None:
+            if isinstance(end, Bolted) and end.clearance is not None:
                 hole = d_f + in_mm(end.clearance)
-            check_fit(member.profile, end, seat(member.profile, end), hole)
         holes.append(hole)
     return tuple(holes)
 

@@ -30,7 +30,7 @@ def drawings(member: Member, folder: str | Path, *, standard: str = "NZS 3404") 
     for end in member.ends:
         laid_out = _as_pattern(member, end)
         if laid_out is not None:
-            views += part_views(PatternGeometry(member, laid_out, chosen))
+            views += part_views(PatternGeometry(member.profile, member.material, laid_out, chosen))
     if not views:
         raise InputError(f"member: {member.mark} has no bolted end, whose parts could be drawn")
     stem = "".join(c if c.isalnum() or c in "-_" else "_" for c in member.mark)

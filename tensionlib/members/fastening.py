@@ -54,7 +54,8 @@ def bought(end: Bolted | BoltedPattern, place: Seat, prefix: str) -> tuple[Input
     try:
         found = choose_bolt(end, place)
     except TensionlibError as error:
-        return (Inputs({"held": "no", "why": str(error)}, {}, {}, prefix + "bolt: "),)
+        why = {"why": str(error)}
+        return (Inputs({"held": "no"}, {}, {}, prefix + "bolt: ", words=why),)
     source = "ISO 4014 and AS/NZS 1252, from memory"
     numbers = {
         "l_grip": Number(found.grip, "plies together"),
@@ -64,13 +65,14 @@ def bought(end: Bolted | BoltedPattern, place: Seat, prefix: str) -> tuple[Input
     }
     washers = f"{found.washers_nut} washer{'s' if found.washers_nut != 1 else ''} under the nut"
     words = f"{found.designation}, {washers}" + "".join(f"; {note}" for note in found.notes)
-    choices = {
-        "held": "yes",
-        "words": words,
-        "threads": end.threads,
-        "clear": "yes" if found.clear_of_threads else "no",
-    }
-    return (Inputs(choices, numbers, {}, prefix + "bolt: "),)
+    choices = {"held": "yes", "threads": end.threads}
+    beside = {"words": words}
+    if found.clear_of_threads and end.threads == "in shear plane":
+        beside["clear"] = (
+            "This bolt keeps its threads out of the shear planes; they are counted in, which is"
+            " on the safe side."
+        )
+    return (Inputs(choices, numbers, {}, prefix + "bolt: ", words=beside),)
 
 
 def room_inputs(

@@ -2,15 +2,14 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
+from typing import Any, NoReturn
 
 from tensionlib.errors import InputError
-from tensionlib.joints.ends import Bolted
-from tensionlib.joints.pattern_end import BoltedPattern
-from tensionlib.joints.pinned import Pinned
-from tensionlib.joints.rod import Threaded
 from tensionlib.joints.stated import in_mm
 from tensionlib.members.member import End
+from tensionlib.members.pieces import Given
 from tensionlib.quantities import LENGTH, format_value
 from tensionlib.steel import Section
 
@@ -66,12 +65,14 @@ def seat(section: Section, end: End) -> Seat:
     InputError
         When the section has no such element, naming those it has.
     """
-    kind = "bolted" if isinstance(end, Bolted | BoltedPattern) else "welded"
+    kind = {"bolted pattern": "bolted", "welded runs": "welded", "rod": "threaded"}.get(
+        end.kind, end.kind
+    )
     accepted = (_BOLTED if kind == "bolted" else _WELDED).get(section.shape, ())
-    if isinstance(end, Pinned):
-        kind, accepted = "pinned", ("plate",) if section.shape == "flat" else ()
-    if isinstance(end, Threaded):
-        kind, accepted = "threaded", ("rod",) if section.shape == "round" else ()
+    if kind == "pinned":
+        accepted = ("plate",) if section.shape == "flat" else ()
+    if kind == "threaded":
+        accepted = ("rod",) if section.shape == "round" else ()
     if not accepted:
         raise InputError(
             f"to: {section.designation} ({section.shape}) cannot be {kind} in this library;"
@@ -91,15 +92,12 @@ def seat(section: Section, end: End) -> Seat:
             f"to: got {end.to!r}; the two parts of {section.designation} face the gusset by their"
             f" {section.facing}"
         )
-    _check_gap(section, end)
     if section.shape.startswith("double") and getattr(end.plate, "number", 1) == 2:
         raise InputError(
             f"plate: two cover plates on {section.designation}; a pair is spliced by the one plate"
             " in its gap: Covers(..., number=1)"
         )
-    element = {"both flanges": "flange", "slot": "wall", "bar": "plate", "rod": "plate"}.get(
-        end.to, end.to
-    )
+    element = _ELEMENTS.get(end.to, end.to)
     double = section.shape.startswith("double")
     both = end.to == "both flanges"
     return Seat(
@@ -114,8 +112,14 @@ def seat(section: Section, end: End) -> Seat:
     )
 
 
-def _check_gap(section: Section, end: End) -> None:
-    """A pair's gap is the gusset's thickness: no less, and no packing plates."""
+def check_gap(section: Section, end: End) -> None:
+    """Refuse a pair whose gap is not its gusset's thickness: there are no packing plates in it.
+
+    Raises
+    ------
+    InputError
+        Naming the plate's thickness.
+    """
     gap = section.dims.get("gap")
     plate = in_mm(end.plate.thickness)
     if gap is not None and not plate <= gap <= plate + _LOOSE:
@@ -125,60 +129,76 @@ def _check_gap(section: Section, end: End) -> None:
         )
 
 
-def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
-    """Refuse holes that overlap or leave the part. `hole` is the hole's diameter, mm.
+# Holes of a regular end that overlap or leave the part ------------------------------------
+
+
+@dataclass(frozen=True)
+class Fit:
+    """One thing that would not fit: `check` of what is given and the hole's diameter in mm raises
+    an InputError naming the field, what came and what would fit. `reads` names the fields read.
 
     Distances below a standard's minimum but on the part are the standard's to judge.
-
-    Raises
-    ------
-    InputError
-        Naming the field, what came and what would fit.
     """
 
-    def length(name: str) -> float | None:
-        value = getattr(end, name)
-        return None if value is None else value.internal
+    check: Callable[[Given, float], None]
+    reads: tuple[str, ...]
 
-    def refuse(name: str, why: str, least: float | None = None) -> None:
-        value = length(name)
-        shown = "missing" if value is None else format_value(value, LENGTH)
-        more = "" if least is None else f"; more than {format_value(least, LENGTH)} is due"
-        raise InputError(f"{name}: {shown}; {why}{more}")
 
+def _refuse(end: Any, name: str, why: str, least: float | None = None) -> NoReturn:
+    value = getattr(end, name)
+    shown = "missing" if value is None else format_value(in_mm(value), LENGTH)
+    more = "" if least is None else f"; more than {format_value(least, LENGTH)} is due"
+    raise InputError(f"{name}: {shown}; {why}{more}")
+
+
+def _edge(name: str) -> Fit:
+    def check(given: Given, hole: float) -> None:
+        value = getattr(given.end, name)
+        if value is not None and in_mm(value) <= hole / 2:
+            _refuse(given.end, name, "the hole would cut the edge", hole / 2)
+
+    return Fit(check, (f"end.{name}",))
+
+
+def _pitch(given: Given, hole: float) -> None:
+    end = given.end
+    if end.per_line > 1 and end.pitch is not None and in_mm(end.pitch) <= hole:
+        _refuse(end, "pitch", "the holes would overlap", hole)
+
+
+def _lines(given: Given, hole: float) -> None:
+    end = given.end
+    if end.lines != 2 or end.line_spacing is None:
+        return
+    stagger, spacing = in_mm(end.stagger), in_mm(end.line_spacing)
+    # Along the force, a bolt of the second line stands between two of the first.
+    between = stagger if end.per_line == 1 or end.pitch is None else in_mm(end.pitch) - stagger
+    step = min(stagger, between)
+    if step < 0.0:
+        _refuse(end, "stagger", "it is at most the pitch")
+    if (step * step + spacing * spacing) ** 0.5 <= hole:
+        _refuse(end, "line_spacing", "the holes of the two lines would overlap", hole)
+
+
+def _across(given: Given, hole: float) -> None:
+    """The lines of bolts across the element."""
+    section, end = given.section, given.end
+    place = seat(section, end)
     radius = hole / 2
-    for name in ("end_distance", "plate_end_distance", "plate_edge_distance"):
-        value = length(name)
-        if value is not None and value <= radius:
-            refuse(name, "the hole would cut the edge", radius)
-    pitch, spacing, stagger = length("pitch"), length("line_spacing"), length("stagger") or 0.0
-    if end.per_line > 1 and pitch is not None and pitch <= hole:
-        refuse("pitch", "the holes would overlap", hole)
-    if end.lines == 2 and spacing is not None:
-        # Along the force, a bolt of the second line stands between two of the first.
-        between = stagger if end.per_line == 1 or pitch is None else pitch - stagger
-        step = min(stagger, between)
-        if step < 0.0:
-            refuse("stagger", "it is at most the pitch")
-        if (step * step + spacing * spacing) ** 0.5 <= hole:
-            refuse("line_spacing", "the holes of the two lines would overlap", hole)
-    outer = (spacing or 0.0) if end.lines == 2 else 0.0
+    outer = in_mm(end.line_spacing) if end.lines == 2 else 0.0
     if place.lines_from == "heel":
-        gauge = length("gauge")
-        if gauge is None:
-            refuse("gauge", "bolts through a channel's flanges are set out from its back")
-            return
-        if gauge - radius <= section.thickness(_other(section, place)):
-            refuse(
-                "gauge",
-                "the hole would run into the other leg or the web",
-                section.thickness(_other(section, place)) + radius,
-            )
+        if end.gauge is None:
+            _refuse(end, "gauge", "bolts through a channel's flanges are set out from its back")
+        gauge = in_mm(end.gauge)
+        other = section.thickness(_other(section, place))
+        if gauge - radius <= other:
+            why = "the hole would run into the other leg or the web"
+            _refuse(end, "gauge", why, other + radius)
         if gauge + outer + radius >= place.width:
-            refuse("gauge", f"the hole leaves the {place.element}, {place.width:g} mm wide")
+            _refuse(end, "gauge", f"the hole leaves the {place.element}, {place.width:g} mm wide")
         return
     if end.gauge is not None:
-        refuse("gauge", f"bolts through the {end.to} stand about its middle; leave gauge out")
+        _refuse(end, "gauge", f"bolts through the {end.to} stand about its middle; leave gauge out")
     clear = place.width
     if place.element == "web":
         # Between the flanges; a tee has one, and its lines stand in the middle.
@@ -195,6 +215,14 @@ def check_fit(section: Section, end: Bolted, place: Seat, hole: float) -> None:
                 "lines: bolts through a flange stand either side of the web; give lines=2 and a"
                 f" line_spacing of more than {web + hole:g} mm"
             )
+
+
+FITS = (
+    *(_edge(name) for name in ("end_distance", "plate_end_distance", "plate_edge_distance")),
+    Fit(_pitch, ("end.per_line", "end.pitch")),
+    Fit(_lines, ("end.lines", "end.line_spacing", "end.stagger", "end.per_line", "end.pitch")),
+    Fit(_across, ("section", "end.to", "end.lines", "end.gauge", "end.line_spacing")),
+)
 
 
 def _other(section: Section, place: Seat) -> str:

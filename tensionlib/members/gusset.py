@@ -2,12 +2,20 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Sequence
 
 from tensionlib.calculation.inputs import Inputs, Number
-from tensionlib.joints.ends import Gusset
+from tensionlib.joints.ends import Bolted, Gusset
 from tensionlib.joints.gusset_shape import Width
+from tensionlib.joints.pattern_end import BoltedPattern
+from tensionlib.joints.pinned import Pinned
+from tensionlib.joints.rod import Threaded
 from tensionlib.joints.stated import in_mm
+from tensionlib.joints.welded_runs import WeldedRuns
+from tensionlib.members.fastening import bolt_places
+from tensionlib.members.geometry import Seat
+from tensionlib.members.member import End
 from tensionlib.steel import weld_metal
 
 _OUTLINE = "from the gusset's outline"
@@ -88,3 +96,21 @@ def _said(width: Width) -> str:
     if not cuts:
         return "The spread stays inside the gusset's outline."
     return "The spread is cut " + " and ".join(cuts) + "."
+
+
+def spread_starts(end: End, place: Seat) -> list[tuple[float, float]]:
+    """Where the force begins to spread in the gusset, in end coordinates (u, v), mm: each bolt,
+    or both ends of each weld; v = 0 is the middle of the bolts or of the element."""
+    if isinstance(end, Bolted | BoltedPattern):
+        at = bolt_places(end)
+        middle = math.fsum(y for _, y in at) / len(at)
+        return [(x, y - middle) for x, y in at]
+    if isinstance(end, Pinned | Threaded):
+        return [(0.0, 0.0)]
+    if isinstance(end, WeldedRuns):
+        runs = [run.as_run() for run in end.runs]
+        points = [p for r in runs for p in ((r.x_1, r.y_1), (r.x_2, r.y_2))]
+        return [(x, y - place.width / 2) for x, y in points]
+    b = place.width / 2
+    first, second = in_mm(end.length_1), in_mm(end.length_2)
+    return [(0.0, -b), (0.0, b), (first, -b), (second, b)]

@@ -31,9 +31,8 @@ from tensionlib.joints.pattern_end import BoltedPattern, Covers
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import member_line
 from tensionlib.members.geometry import Seat, seat, thickest
-from tensionlib.members.member import Member
 from tensionlib.standards import Standard
-from tensionlib.steel import Bolt, Section, bolt, grade
+from tensionlib.steel import Bolt, Grade, Section, bolt, grade
 
 _TAN_30 = math.tan(math.pi / 6)
 _FOUND = "found by the search"
@@ -78,9 +77,11 @@ class PatternGeometry:
         For an element the section does not have, or holes that overlap or leave their part.
     """
 
-    def __init__(self, member: Member, end: BoltedPattern, standard: Standard) -> None:
-        self.section: Section = member.profile
-        steel = member.material.made_as(self.section.shape)
+    def __init__(
+        self, section: Section, steel: Grade, end: BoltedPattern, standard: Standard
+    ) -> None:
+        self.section = section
+        steel = steel.made_as(section.shape)
         t_y = thickest(self.section)
         self.strengths = steel.f_y(t_y), steel.f_u(t_y)
         self.end = end

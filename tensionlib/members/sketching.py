@@ -49,7 +49,7 @@ def views_of(member: Member, end: End, standard: Standard) -> list[PartView]:
     """The parts of an end by themselves; none but for an end with any pattern of holes."""
     if not isinstance(end, BoltedPattern):
         return []
-    return part_views(PatternGeometry(member, end, standard))
+    return part_views(PatternGeometry(member.profile, member.material, end, standard))
 
 
 def end_view(section: Section, end: End, force: str, hole: float) -> EndView:

@@ -168,7 +168,7 @@ def test_the_bolt_shown_to_tear_out_is_the_worst_of_all(drawn):
     section, end = drawn
     tie = member(section, end)
     calc = designed(section, end)
-    shape = PatternGeometry(tie, end, standard("NZS 3404"))
+    shape = PatternGeometry(tie.profile, tie.material, end, standard("NZS 3404"))
     force, d_f = calc.value("N_star_c").internal, shape.fastener.d_f
     shares = {share.mark: share for share in shape.group.shares}
     for grip in shape.grips:

@@ -44,11 +44,11 @@ def fastening(work: Working, end: Inputs) -> None:
 
 def _bolt(work: Working, bought: Inputs) -> None:
     if bought.choice("held") == "no":
-        work.note(f"No bolt length is given: {bought.choice('why')}.", PRACTICE)
+        work.note(f"No bolt length is given: {bought.word('why')}.", PRACTICE)
         return
     bought.take(work, "l_grip", GRIP)
     bought.take(work, "L_bolt", LENGTH_BOUGHT)
-    work.note(f"Bolt to buy: {bought.choice('words')}.", PRACTICE)
+    work.note(f"Bolt to buy: {bought.word('words')}.", PRACTICE)
     shank = bought.take(work, "l_shank", SHANK)
     plane = bought.take(work, "z_plane", PLANE)
     if bought.choice("threads") == "out of shear plane":
@@ -60,9 +60,5 @@ def _bolt(work: Working, bought: Inputs) -> None:
             kind="detailing",
             note="threads are counted out of the shear planes",
         )
-    elif bought.choice("clear") == "yes":
-        work.note(
-            "This bolt keeps its threads out of the shear planes; they are counted in, which is"
-            " on the safe side.",
-            PRACTICE,
-        )
+    if remark := bought.word("clear"):
+        work.note(remark, PRACTICE)

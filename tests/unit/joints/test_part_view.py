@@ -39,7 +39,7 @@ def pattern_end(**changes):
 def views(end=None, section="150x100x12 UA", **changes):
     tie = member(section, end or pattern_end(**changes))
     (laid_out,) = tie.ends
-    return part_views(PatternGeometry(tie, laid_out, standard("NZS 3404")))
+    return part_views(PatternGeometry(tie.profile, tie.material, laid_out, standard("NZS 3404")))
 
 
 def outlined():

@@ -235,7 +235,7 @@ def test_the_moment_of_a_line_off_the_centroid():
 @pytest.mark.parametrize("holes", [LINE, three_lines(70).without_hole("5").without_hole("6")])
 def test_elastic_shares_are_in_equilibrium(holes):
     tie = member("150x100x12 UA", pattern(holes, share="elastic"))
-    group = PatternGeometry(tie, tie.end, standard("NZS 3404")).group
+    group = PatternGeometry(tie.profile, tie.material, tie.end, standard("NZS 3404")).group
     assert math.fsum(s.along for s in group.shares) == pytest.approx(1.0, abs=1e-12)
     assert math.fsum(s.across for s in group.shares) == pytest.approx(0.0, abs=1e-12)
     # Their moment about the line of the member's force is nothing.
