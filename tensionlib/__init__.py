@@ -58,6 +58,13 @@ if TYPE_CHECKING:
     from tensionlib.steel import grade as grade
     from tensionlib.steel import section as section
     from tensionlib.steel import stated as stated
+    from tensionlib.whatif.objectives import Rates as Rates
+    from tensionlib.whatif.rules import bolt_sizes as bolt_sizes
+    from tensionlib.whatif.rules import clear_of_heel as clear_of_heel
+    from tensionlib.whatif.rules import follows as follows
+    from tensionlib.whatif.rules import middle_of_leg as middle_of_leg
+    from tensionlib.whatif.rules import per_bolt as per_bolt
+    from tensionlib.whatif.study import study as study
 
 _WHERE = {
     "Across": "members.beside",
@@ -79,30 +86,37 @@ _WHERE = {
     "Overstrength": "members.beside",
     "Pattern": "joints.holes",
     "Pinned": "joints.pinned",
+    "Rates": "whatif.objectives",
     "Source": "calculation.symbols",
     "Symbol": "calculation.symbols",
-    "US": "quantities",
     "Threaded": "joints.rod",
+    "US": "quantities",
     "Welded": "joints.ends",
     "WeldedRuns": "joints.welded_runs",
     "Working": "calculation.working",
     "as_pattern": "joints.pattern_end",
     "balanced_lengths": "joints.welded_runs",
     "bolt": "steel",
+    "bolt_sizes": "whatif.rules",
     "by_dimensions": "steel",
     "check_file": "package.project",
+    "clear_of_heel": "whatif.rules",
     "condition": "calculation.formula",
     "design": "members.design",
     "double": "steel",
     "drawings": "members.drawings",
     "find": "steel",
+    "follows": "whatif.rules",
     "formula": "calculation.formula",
     "grade": "steel",
     "issue": "package.issue",
+    "middle_of_leg": "whatif.rules",
+    "per_bolt": "whatif.rules",
     "project_notation": "calculation.symbols",
     "section": "steel",
     "stated": "steel",
     "steps": "quantities",
+    "study": "whatif.study",
     "values": "quantities",
 }
 

@@ -6,8 +6,9 @@ is printed as an assumption by the calculation.
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass
-from typing import ClassVar
+from typing import Any, ClassVar
 
 from tensionlib.errors import InputError
 from tensionlib.joints.gusset_shape import GussetShape
@@ -18,8 +19,12 @@ from tensionlib.joints.stated import (
     THREADS,
     Length,
     Stated,
-    choice,
+    factor_door,
     in_mm,
+    length_door,
+    named_door,
+    reason_given,
+    word_door,
 )
 from tensionlib.quantities import FORCE, Quantity, count, door, factor
 
@@ -28,6 +33,12 @@ WELDED_TO = (*BOLTED_TO, "slot", "bar")
 
 
 Force = Quantity | str
+
+
+def _hanger_door(name: str, value: Any) -> Any:
+    if value is not None and not isinstance(value, Hanger):
+        raise InputError(f"{name}: got {value!r}; a Hanger(...) is due")
+    return value
 
 
 @dataclass(frozen=True)
@@ -72,27 +83,26 @@ class Gusset(Stated):
     support_leg: Length | None = None
     support_quality: str = "SP"
 
+    DOORS: ClassVar = {
+        "thickness": length_door("12 mm", due=True),
+        "width": length_door("260 mm"),
+        "free_length": length_door("150 mm"),
+        "support_leg": length_door("6 mm"),
+        "support_quality": word_door(QUALITIES),
+        "length_factor": lambda name, value: factor(name, value, above=0.0, at_most=5.0),
+        "compression": lambda name, value: (
+            None if value is None else door(name, value, FORCE, at_least=0.0, example="120 kN")
+        ),
+        "hanger": _hanger_door,
+        "steel": named_door("AS/NZS 3678 250", "name a grade"),
+    }
+
     def __post_init__(self) -> None:
-        self._length("thickness", example="12 mm", due=True)
-        self._length("width", example="260 mm")
-        self._length("free_length", example="150 mm")
-        self._length("support_leg", example="6 mm")
-        choice("support_quality", self.support_quality, QUALITIES)
-        k = factor("length_factor", self.length_factor, above=0.0, at_most=5.0)
-        object.__setattr__(self, "length_factor", k)
-        if self.compression is not None:
-            force = door("compression", self.compression, FORCE, at_least=0.0, example="120 kN")
-            object.__setattr__(self, "compression", force)
+        self._pass_doors()
         if self.shape is not None and not isinstance(self.shape, GussetShape):
             raise InputError(f"shape: got {self.shape!r}; a GussetShape(...) is due")
         if self.shape is None and self.support_leg is not None:
             raise InputError("support_leg: given without the gusset's shape, which has the support")
-        if self.hanger is not None and not isinstance(self.hanger, Hanger):
-            raise InputError(f"hanger: got {self.hanger!r}; a Hanger(...) is due")
-        if not isinstance(self.steel, str):
-            raise InputError(
-                f"steel: got {self.steel!r}; name a grade, for example 'AS/NZS 3678 250'"
-            )
 
 
 def check_plate(plate: object) -> None:
@@ -102,6 +112,73 @@ def check_plate(plate: object) -> None:
             f"plate: got {plate!r}; a Gusset is due, for example"
             " Gusset('12 mm', 'AS/NZS 3678 250') (cover plates go with a BoltedPattern)"
         )
+
+
+def _lines_door(name: str, value: Any) -> int:
+    number = count(name, value, at_least=1)
+    if number > 2:
+        raise InputError(f"{name}: got {value}; 1 or 2 lines of bolts are accepted")
+    return number
+
+
+# What does not go together, and the fields of the end it lies in.
+
+
+def _pitch_due(end: Any) -> None:
+    if end.per_line > 1 and end.pitch is None:
+        raise InputError("pitch: missing; two or more bolts a line need it, for example '70 mm'")
+
+
+def _lines_agree(end: Any) -> None:
+    if end.lines == 2 and end.line_spacing is None:
+        raise InputError("line_spacing: missing; two lines of bolts need it, for example '60 mm'")
+    if end.lines == 1 and in_mm(end.stagger) > 0.0:
+        raise InputError("stagger: given for one line of bolts; it needs lines=2")
+    if end.lines == 1 and end.line_spacing is not None:
+        raise InputError("line_spacing: given for one line of bolts; it needs lines=2")
+
+
+def _gauge_due(end: Any) -> None:
+    if end.to in ("long leg", "short leg", "leg") and end.gauge is None:
+        raise InputError(
+            "gauge: missing; an angle's bolts need the distance from its heel, for example '55 mm'"
+        )
+
+
+def _slot_agrees(end: Any) -> None:
+    if (end.to == "slot") != (end.slot_clearance is not None):
+        raise InputError(
+            "slot_clearance: missing; a slotted tube needs it, for example '3 mm'"
+            if end.to == "slot"
+            else f"slot_clearance: given for an end welded to {end.to!r}; it needs to='slot'"
+        )
+    if end.shear_lag_by_length and (end.to != "slot" or end.k_te is not None):
+        raise InputError(
+            "shear_lag_by_length: it is for an end welded to 'slot' without a stated k_te"
+        )
+
+
+def _transverse_agrees(end: Any) -> None:
+    if end.transverse is not None and end.to in ("slot", "bar", "both flanges"):
+        raise InputError(
+            f"transverse: given for an end welded to {end.to!r}; a run across the end is"
+            " accepted on a leg, web, flange or plate"
+        )
+
+
+Agree = tuple[Callable[[Any], None], tuple[str, ...]]
+_REASON: Agree = (reason_given, ("k_te", "k_te_reason"))
+AGREE_BOLTED: tuple[Agree, ...] = (
+    (_pitch_due, ("per_line", "pitch")),
+    (_lines_agree, ("lines", "line_spacing", "stagger")),
+    (_gauge_due, ("to", "gauge")),
+    _REASON,
+)
+AGREE_WELDED: tuple[Agree, ...] = (
+    (_slot_agrees, ("to", "slot_clearance", "shear_lag_by_length", "k_te")),
+    (_transverse_agrees, ("to", "transverse")),
+    _REASON,
+)
 
 
 @dataclass(frozen=True)
@@ -174,47 +251,37 @@ class Bolted(Stated):
     k_te_reason: str = ""
     kind: ClassVar[str] = "bolted"
 
+    DOORS: ClassVar = {
+        "to": word_door(BOLTED_TO),
+        "threads": word_door(THREADS),
+        "edge_kind": word_door(EDGES),
+        "bolts": named_door("M20 8.8/S", "name them"),
+        "per_line": lambda name, value: count(name, value, at_least=1),
+        "lines": _lines_door,
+        "pitch": length_door("70 mm"),
+        "gauge": length_door("55 mm"),
+        "line_spacing": length_door("60 mm"),
+        "plate_end_distance": length_door("35 mm"),
+        "plate_edge_distance": length_door("50 mm"),
+        "end_distance": length_door("35 mm", due=True),
+        "stagger": length_door("35 mm", at_least=0.0),
+        "clearance": length_door("2 mm", at_least=0.0),
+        "packing": length_door("8 mm"),
+        "slip_factor": lambda name, value: factor(name, value, above=0.0, at_most=1.0),
+        "k_te": factor_door(above=0.0, at_most=1.0),
+    }
+
     def __post_init__(self) -> None:
-        choice("to", self.to, BOLTED_TO)
-        choice("threads", self.threads, THREADS)
-        choice("edge_kind", self.edge_kind, EDGES)
-        if not isinstance(self.bolts, str):
-            raise InputError(f"bolts: got {self.bolts!r}; name them, for example 'M20 8.8/S'")
         check_plate(self.plate)
-        object.__setattr__(self, "per_line", count("per_line", self.per_line, at_least=1))
-        object.__setattr__(self, "lines", count("lines", self.lines, at_least=1))
-        if self.lines > 2:
-            raise InputError(f"lines: got {self.lines}; 1 or 2 lines of bolts are accepted")
-        for name, example in (
-            ("pitch", "70 mm"),
-            ("gauge", "55 mm"),
-            ("line_spacing", "60 mm"),
-            ("plate_end_distance", "35 mm"),
-            ("plate_edge_distance", "50 mm"),
-        ):
-            self._length(name, example=example)
-        self._length("end_distance", example="35 mm", due=True)
-        self._length("stagger", at_least=0.0, example="35 mm")
-        self._length("clearance", at_least=0.0, example="2 mm")
-        self._shear_planes()
-        if self.per_line > 1 and self.pitch is None:
-            raise InputError(
-                "pitch: missing; two or more bolts a line need it, for example '70 mm'"
-            )
-        if self.lines == 2 and self.line_spacing is None:
-            raise InputError(
-                "line_spacing: missing; two lines of bolts need it, for example '60 mm'"
-            )
-        if self.lines == 1 and in_mm(self.stagger) > 0.0:
-            raise InputError("stagger: given for one line of bolts; it needs lines=2")
-        if self.lines == 1 and self.line_spacing is not None:
-            raise InputError("line_spacing: given for one line of bolts; it needs lines=2")
-        if self.to in ("long leg", "short leg", "leg") and self.gauge is None:
-            raise InputError(
-                "gauge: missing; an angle's bolts need the distance from its heel, for example"
-                " '55 mm'"
-            )
-        self._factor()
+        self._pass_doors()
+        for agree, _ in AGREE_BOLTED:
+            agree(self)
+
+
+def _flag_door(name: str, value: Any) -> bool:
+    if not isinstance(value, bool):
+        raise InputError(f"{name}: got {value!r}; True or False is due")
+    return value
 
 
 @dataclass(frozen=True)
@@ -263,36 +330,23 @@ class Welded(Stated):
     k_te_reason: str = ""
     kind: ClassVar[str] = "welded"
 
+    DOORS: ClassVar = {
+        "to": word_door(WELDED_TO),
+        "quality": word_door(QUALITIES),
+        "metal": named_door("E48XX"),
+        "leg_size": length_door("6 mm", due=True),
+        "length_1": length_door("120 mm", due=True),
+        "length_2": length_door("120 mm"),
+        "transverse": length_door("90 mm"),
+        "slot_clearance": length_door("3 mm", at_least=0.0),
+        "shear_lag_by_length": _flag_door,
+        "k_te": factor_door(above=0.0, at_most=1.0),
+    }
+
     def __post_init__(self) -> None:
-        choice("to", self.to, WELDED_TO)
-        choice("quality", self.quality, QUALITIES)
-        if not isinstance(self.metal, str):
-            raise InputError(f"metal: got {self.metal!r}; name it, for example 'E48XX'")
         check_plate(self.plate)
-        self._length("leg_size", example="6 mm", due=True)
-        self._length("length_1", example="120 mm", due=True)
+        self._pass_doors()
         if self.length_2 is None:
             object.__setattr__(self, "length_2", self.length_1)
-        self._length("length_2", example="120 mm")
-        self._length("transverse", example="90 mm")
-        self._length("slot_clearance", at_least=0.0, example="3 mm")
-        if (self.to == "slot") != (self.slot_clearance is not None):
-            raise InputError(
-                "slot_clearance: missing; a slotted tube needs it, for example '3 mm'"
-                if self.to == "slot"
-                else f"slot_clearance: given for an end welded to {self.to!r}; it needs to='slot'"
-            )
-        if not isinstance(self.shear_lag_by_length, bool):
-            raise InputError(
-                f"shear_lag_by_length: got {self.shear_lag_by_length!r}; True or False is due"
-            )
-        if self.shear_lag_by_length and (self.to != "slot" or self.k_te is not None):
-            raise InputError(
-                "shear_lag_by_length: it is for an end welded to 'slot' without a stated k_te"
-            )
-        if self.transverse is not None and self.to in ("slot", "bar", "both flanges"):
-            raise InputError(
-                f"transverse: given for an end welded to {self.to!r}; a run across the end is"
-                " accepted on a leg, web, flange or plate"
-            )
-        self._factor()
+        for agree, _ in AGREE_WELDED:
+            agree(self)

@@ -3,10 +3,11 @@
 from __future__ import annotations
 
 from tensionlib.calculation.inputs import Inputs, Number
+from tensionlib.joints.ends import AGREE_BOLTED
 from tensionlib.joints.stated import in_mm
 from tensionlib.members.fastening import bought, room_inputs
 from tensionlib.members.geometry import FITS, Fit, seat
-from tensionlib.members.pieces import NOTHING, Given, Piece
+from tensionlib.members.pieces import NOTHING, Given, Piece, refuses
 from tensionlib.steel import bolt
 
 _STATED = "given"
@@ -173,5 +174,8 @@ def _refusal(fit: Fit) -> Piece:
     return Piece(make, ("standard", "end.bolts", "end.clearance", *fit.reads))
 
 
-BOLTED_CHECKS = tuple(_refusal(fit) for fit in FITS)
-"""Refuse holes that overlap or leave the part."""
+BOLTED_CHECKS = (
+    *(refuses(agree, reads) for agree, reads in AGREE_BOLTED),
+    *(_refusal(fit) for fit in FITS),
+)
+"""Refuse fields that do not go together, and holes that overlap or leave the part."""

@@ -134,7 +134,7 @@ class Brief:
             if full in here:
                 raise InputError(f"field: {full!r} is changed twice")
             here[full] = value
-        member = _changed(self.member, members) if members else self.member
+        member = changed(self.member, members) if members else self.member
         return Brief(
             member=member,
             force=mine.get("force", self.force),
@@ -158,7 +158,7 @@ def _fields(kind: Any) -> tuple[str, ...]:
     return tuple(f.name for f in fields(kind))
 
 
-def _changed(holder: Any, changes: Mapping[str, Any]) -> Any:
+def changed(holder: Any, changes: Mapping[str, Any]) -> Any:
     """The same object with fields changed, by names such as "plate.thickness" below it."""
     values = {name: getattr(holder, name) for name in _fields(holder.__class__)}
     below: dict[str, dict[str, Any]] = {}
@@ -169,7 +169,7 @@ def _changed(holder: Any, changes: Mapping[str, Any]) -> Any:
         else:
             values[first] = value
     for first, inner in below.items():
-        values[first] = _changed(values[first], inner)
+        values[first] = changed(values[first], inner)
     if (
         isinstance(holder, Welded)
         and "length_1" in changes

@@ -18,6 +18,13 @@ from tensionlib.steel import Grade, Section, grade, section
 End = Bolted | BoltedPattern | Welded | WeldedRuns | Pinned | Threaded
 
 
+def laid_out(end: End, section: Section) -> End:
+    """An end as it is designed: a regular bolted one on an outlined gusset, hole by hole."""
+    if isinstance(end, Bolted) and end.plate.shape is not None:
+        return as_pattern(end, section)
+    return end
+
+
 @dataclass(frozen=True)
 class Member:
     """A tension member with its two ends.
@@ -109,9 +116,7 @@ class Member:
         return (self._laid_out(self.end), self._laid_out(self.far_end))
 
     def _laid_out(self, end: End) -> End:
-        if isinstance(end, Bolted) and end.plate.shape is not None:
-            return as_pattern(end, self.profile)
-        return end
+        return laid_out(end, self.profile)
 
     @property
     def profile(self) -> Section:

@@ -58,6 +58,16 @@ class Piece:
     reads: tuple[str, ...]
 
 
+def refuses(check: Callable[[Any], None], of_end: tuple[str, ...]) -> Piece:
+    """A piece that only refuses fields of an end that do not go together."""
+
+    def make(given: Given) -> Inputs:
+        check(given.end)
+        return NOTHING
+
+    return Piece(make, tuple(f"end.{name}" for name in of_end))
+
+
 def gather(pieces: Iterable[Piece], given: Given) -> Inputs:
     """The pieces of one member or end, merged in their order. Raises what they raise."""
     return merged([piece.make(given) for piece in pieces], given.prefix)

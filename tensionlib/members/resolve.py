@@ -18,7 +18,7 @@ from tensionlib.members.member import End
 from tensionlib.members.other_pieces import hanging, pinned, rod
 from tensionlib.members.pattern import PatternGeometry, pattern_numbers
 from tensionlib.members.pieces import NOTHING, Given, Piece, gather
-from tensionlib.members.strengths import strength_tables
+from tensionlib.members.strengths import refuse_beyond, strength_tables
 from tensionlib.members.welded_pieces import WELDED_PIECES, any_runs
 from tensionlib.quantities import Quantity
 from tensionlib.steel import Section, grade
@@ -72,7 +72,9 @@ def _tied(given: Given) -> Inputs:
 
 def _strengths(given: Given) -> Inputs:
     steel = given.steel.made_as(given.section.shape)
-    return Inputs({}, {}, strength_tables(steel, "f_y", "f_u", "the section"))
+    tables = strength_tables(steel, "f_y", "f_u", "the section")
+    refuse_beyond(tables, thickest(given.section))
+    return Inputs({}, {}, tables)
 
 
 def _across(given: Given) -> Inputs:
@@ -188,7 +190,9 @@ def _plate_width(given: Given) -> Inputs:
 def _plate_strengths(given: Given) -> Inputs:
     steel = grade(given.end.plate.steel, "plate.steel")
     steel.suits("plate", "plate.steel")
-    return Inputs({}, {}, strength_tables(steel, "f_yp", "f_up", "the gusset"))
+    tables = strength_tables(steel, "f_yp", "f_up", "the gusset")
+    refuse_beyond(tables, in_mm(given.end.plate.thickness))
+    return Inputs({}, {}, tables)
 
 
 def _hung(given: Given) -> Inputs:
@@ -234,7 +238,7 @@ _COMMON = (
     Piece(_plate_thickness, ("end.plate.thickness",)),
     Piece(_plate_width, ("end.plate.width",)),
     Piece(_hung, ("end.plate.hanger",)),
-    Piece(_plate_strengths, ("end.plate.steel",)),
+    Piece(_plate_strengths, ("end.plate.steel", "end.plate.thickness")),
 )
 _GUSSET_ALONE = Piece(_gusset_alone, _PLATE_ALONE)
 _OTHERS = {

@@ -23,3 +23,9 @@ def strength_tables(
         f_y: (strength_table(steel, "f_y", of), steel.name),
         f_u: (strength_table(steel, "f_u", of), steel.name),
     }
+
+
+def refuse_beyond(tables: dict[str, tuple[ThresholdTable, str]], thickness: float) -> None:
+    """Refuse a thickness in mm that the grade's tables do not reach. Raises InputError."""
+    for table, row in tables.values():
+        table.band(row, thickness)

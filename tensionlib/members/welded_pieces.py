@@ -5,10 +5,11 @@ from __future__ import annotations
 import math
 
 from tensionlib.calculation.inputs import Inputs, Number
+from tensionlib.joints.ends import AGREE_WELDED
 from tensionlib.joints.fillet_group import elastic_stress, properties
 from tensionlib.joints.stated import in_mm
 from tensionlib.joints.welded_runs import member_line
-from tensionlib.members.pieces import NOTHING, Given, Piece
+from tensionlib.members.pieces import NOTHING, Given, Piece, refuses
 from tensionlib.steel import Section, weld_metal
 
 _STATED = "given"
@@ -25,7 +26,7 @@ def _runs_along(given: Given) -> Inputs:
     numbers = {
         "t_w": Number(in_mm(end.leg_size), _STATED),
         "l_1": Number(in_mm(end.length_1), _STATED),
-        "l_2": Number(in_mm(end.length_2), _STATED),
+        "l_2": Number(in_mm(end.length_1 if end.length_2 is None else end.length_2), _STATED),
     }
     return Inputs({}, numbers)
 
@@ -63,6 +64,7 @@ def _slotted(section: Section) -> dict[str, Number]:
 
 
 WELDED_PIECES = (
+    *(refuses(agree, reads) for agree, reads in AGREE_WELDED),
     Piece(_metal, ("end.metal", "end.quality")),
     Piece(_runs_along, ("end.leg_size", "end.length_1", "end.length_2")),
     Piece(_run_across, ("end.transverse",)),
