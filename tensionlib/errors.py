@@ -26,6 +26,10 @@ class DataNotFoundError(TensionlibError, LookupError):
     """A designation, grade, bolt or name that no table holds."""
 
 
+class MissingExtraError(TensionlibError, ImportError):
+    """A library of an optional extra that is not installed."""
+
+
 def did_you_mean(given: str, known: Iterable[str], most: int = 3) -> str:
     """Say which known names stand nearest to `given`: " Did you mean 'a' or 'b'?", or nothing."""
     folded: dict[str, str] = {}

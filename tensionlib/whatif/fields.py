@@ -80,12 +80,14 @@ class Fields:
     def __init__(self, base: Brief, vary: Mapping[Any, Any]) -> None:
         self.base = base
         self.rules: dict[str, Rule] = {}
+        self.stated_rules: dict[str, Rule] = {}
         axes: list[Axis] = []
         for key, values in vary.items():
             names = tuple(base.full_name(n) for n in (key if isinstance(key, tuple) else (key,)))
             if isinstance(values, Rule):
                 reads = tuple(_beside(base, names[0], read) for read in values.reads)
                 self.rules[names[0]] = Rule(reads, values.by, values.words)
+                self.stated_rules[names[0]] = values
                 continue
             axes.append(_axis(base, key, names, values))
         self.axes = tuple(axes)

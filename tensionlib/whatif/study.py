@@ -3,8 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Mapping, Sequence
+from concurrent.futures import Executor
 from dataclasses import dataclass
 from functools import cached_property
+from os import PathLike
+from pathlib import Path
 from typing import Any, cast
 
 import numpy as np
@@ -21,16 +24,27 @@ from tensionlib.members.member import Member, laid_out
 from tensionlib.members.pieces import END_NAMES, Piece
 from tensionlib.members.resolve import MEMBER_PIECES, REGULAR, is_regular, whole_end
 from tensionlib.quantities import FORCE as FORCE_ROLE
-from tensionlib.quantities import Quantity, door
+from tensionlib.quantities import (
+    SUMMARY_FIGURES,
+    Quantity,
+    door,
+    format_number,
+    format_utilisation,
+)
 from tensionlib.standards import standard as find_standard
+from tensionlib.whatif.extras import need
 from tensionlib.whatif.fields import Fields
 from tensionlib.whatif.grid import CANNOT, FAIL, NOT_COVERED, PASS, Grid, Results
 from tensionlib.whatif.objectives import Objective, Rates, objective
 from tensionlib.whatif.program import Program
+from tensionlib.whatif.reading import Reading, Rows
 from tensionlib.whatif.tables import Table, at_end, of_piece, table
 from tensionlib.whatif.take_off import Term
 
 Kind = type[Bolted] | type[Welded]
+LONG = 2_000_000
+By = str | Rates | Objective
+DEFAULT: tuple[By, ...] = ("mass", "bolts")
 WORDS = {CANNOT: "CANNOT BE BUILT", PASS: "PASS", FAIL: "FAIL", NOT_COVERED: "NOT COVERED"}
 
 
@@ -74,6 +88,11 @@ class Study:
     def results(self) -> Results:
         """What every row came to."""
         return self.work_out()
+
+    def keep(self, results: Results) -> Study:
+        """This study with results worked out elsewhere."""
+        self.__dict__["results"] = results
+        return self
 
     def work_out(self, told: Callable[[int], None] = lambda rows: None) -> Results:
         """Work out every row afresh; `told` is called with numbers of rows as they are done."""
@@ -278,6 +297,97 @@ class Study:
     def __iter__(self) -> Iterator[Calculation]:
         return (self[row] for row in range(len(self)))
 
+    # Choosing -----------------------------------------------------------------------------
+
+    def frame(
+        self,
+        rows: Sequence[int] | npt.NDArray[np.int64] | None = None,
+        *,
+        by: Sequence[By] = DEFAULT,
+    ) -> Any:
+        """Rows as a pandas data frame, indexed by their numbers; units stand in the heads.
+
+        Parameters
+        ----------
+        rows : sequence of int, optional
+            All rows unless given.
+        by : sequence
+            Objectives to show: names of `OBJECTIVES`, or Rates.
+        """
+        from tensionlib.whatif.frame import frame
+
+        return frame(self, rows, by)
+
+    def best_rows(self, by: By = "mass", n: int = 10) -> npt.NDArray[np.int64]:
+        """Numbers of the passing rows with the least of an objective, of equals the least used."""
+        rows = np.flatnonzero(self.passes)
+        values = self.measure(by)[rows]
+        if len(rows) > n:
+            # No more than those level with the n-th need sorting.
+            edge = np.partition(values, n - 1)[n - 1]
+            keep = values <= edge
+            rows, values = rows[keep], values[keep]
+        order = np.lexsort((rows, self.utilisation[rows], values))
+        return rows[order[:n]]
+
+    def best(self, by: By = "mass", n: int = 10) -> Any:
+        """The best passing rows by an objective, as `frame` shows them."""
+        shown = (by, *(one for one in DEFAULT if one != by))
+        return self.frame(self.best_rows(by, n), by=shown)
+
+    def front_rows(self, first: By = "mass", second: By = "bolts") -> npt.NDArray[np.int64]:
+        """The trade-off front: passing rows that no other betters in one objective without being
+        worse in the other, in order of the first. "utilisation" is an objective here too."""
+        rows = np.flatnonzero(self.passes)
+        one, two = (self._by(by)[rows] for by in (first, second))
+        order = np.lexsort((rows, self.utilisation[rows], two, one))
+        least = np.minimum.accumulate(two[order])
+        better = np.r_[True, two[order][1:] < least[:-1]] if len(order) else np.zeros(0, bool)
+        return rows[order[better]]
+
+    def _by(self, by: By) -> npt.NDArray[np.float64]:
+        return self.utilisation if by == "utilisation" else self.measure(by)
+
+    def write_parquet(self, path: str | PathLike[str], *, by: Sequence[By] = DEFAULT) -> Path:
+        """Write every row as a Parquet file, which appears whole or not at all; gives its path."""
+        from tensionlib.whatif.frame import write_parquet
+
+        return write_parquet(self, path, by)
+
+    def reading(self, n: int = 8) -> Reading:
+        """The study in words, and its best rows by mass."""
+        lists = ", ".join(f"{axis.label} ({len(axis)})" for axis in self.fields.axes)
+        says = [self._counted() + ".", f"Varied: {lists or 'nothing'}."]
+        says += [f"{name} is {rule.words}." for name, rule in self.fields.stated_rules.items()]
+        return Reading(f"Alternatives of {self.base.member.mark}", says, self._best_table(n))
+
+    def _best_table(self, n: int) -> list[Rows]:
+        from tensionlib.whatif.frame import columns
+
+        rows = self.best_rows(n=n)
+        if not len(rows):
+            return []
+        varied = [column for column in columns(self) if len(column.values) > 1]
+        mass, bolts = self.measure("mass"), self.measure("bolts")
+        body = [
+            (
+                str(row),
+                *(_cell(c.values[int(c.places(np.array([row]))[0])]) for c in varied),
+                format_number(float(mass[row]), SUMMARY_FIGURES),
+                f"{bolts[row]:.0f}",
+                format_utilisation(float(self.utilisation[row])),
+                ", ".join(self.governing(int(row))),
+            )
+            for row in rows
+        ]
+        head = ("row", *(c.head for c in varied), "mass [kg]", "bolts", "utilisation", "governs")
+        numbers = [0, *(k for k, c in enumerate(varied, 1) if c.numeric)]
+        numbers += range(len(varied) + 1, len(varied) + 4)
+        return [Rows(head, body, numbers, "The lightest that pass")]
+
+    def _repr_mimebundle_(self, include: Any = None, exclude: Any = None) -> dict[str, Any]:
+        return self.reading().bundle()
+
     def _row(self, row: int) -> int:
         n = len(self)
         if not -n <= row < n:
@@ -290,6 +400,10 @@ class Study:
         said += [f"{counts[NOT_COVERED]:,} not covered"] if counts[NOT_COVERED] else []
         said += [f"{counts[CANNOT]:,} cannot be built"] if counts[CANNOT] else []
         return f"{len(self):,} alternatives, " + ", ".join(said)
+
+
+def _cell(value: Any) -> str:
+    return "none" if value is None else f"{value:g}" if isinstance(value, float) else str(value)
 
 
 def _one_number(
@@ -356,6 +470,8 @@ def study(
     vary: Mapping[Any, Any] | None = None,
     *,
     force: Quantity | str | None = None,
+    executor: Executor | None = None,
+    progress: bool | None = None,
     **more: Any,
 ) -> Study:
     """Work out every alternative of a brief.
@@ -369,6 +485,10 @@ def study(
         tuples, whose fields vary together. Names are those of `Brief`.
     force : force
         The design force of a Member.
+    executor : concurrent.futures.Executor, optional
+        Works out parts of the study: a process pool, or the executor of a cluster.
+    progress : bool, optional
+        A progress bar; shown for `LONG` rows and more unless told otherwise.
     more
         Further lists, by names that are Python words: ``per_line=[2, 3, 4]``.
 
@@ -381,4 +501,19 @@ def study(
     DataNotFoundError, InputError, UnitError
         For an unknown name, an empty list, a value that a field refuses.
     """
-    return Study(Brief.of(asked, force), {**(vary or {}), **more})
+    made = Study(Brief.of(asked, force), {**(vary or {}), **more})
+    bar = None
+    if len(made) >= LONG if progress is None else progress:
+        bar = need("tqdm").tqdm(total=len(made), unit=" rows", unit_scale=True)
+    told = (lambda rows: None) if bar is None else bar.update
+    try:
+        if executor is None:
+            made.keep(made.work_out(told))
+        else:
+            from tensionlib.whatif.parallel import work_out
+
+            made.keep(work_out(made, executor, told))
+    finally:
+        if bar is not None:
+            bar.close()
+    return made
